@@ -1,0 +1,42 @@
+/**
+ * `npm start`: checks the environment, builds if the sources are newer than the build, and serves.
+ * Plain JavaScript, because it runs before anything is built.
+ */
+import { mkdirSync } from 'node:fs';
+import path from 'node:path';
+import process from 'node:process';
+import { fileURLToPath, pathToFileURL } from 'node:url';
+import { readEnvironment } from '../lib/server/config/environment.js';
+import { build, isBuilt } from './build.js';
+
+const root = path.resolve(fileURLToPath(import.meta.url), '../../..');
+process.chdir(root);
+
+const result = readEnvironment(process.env, root);
+if ('mistakes' in result) {
+	process.stderr.write(`Watersmeet cannot start:\n${result.mistakes.map((text) => `  - ${text}\n`).join('')}`);
+	process.exit(1);
+}
+const { environment } = result;
+try {
+	mkdirSync(environment.DATA_DIR, { recursive: true });
+} catch (error) {
+	const reason = error instanceof Error ? error.message : String(error);
+	process.stderr.write(`Watersmeet cannot start:\n  - DATA_DIR could not be made: ${reason}\n`);
+	process.exit(1);
+}
+if (!isBuilt(root)) {
+	process.stdout.write('Building (once; about half a minute)…\n');
+	build(root);
+}
+// The adapter reads these when it is imported. Without ORIGIN it would take every request for https.
+process.env.NODE_ENV = environment.NODE_ENV;
+process.env.HOST = environment.HOST;
+process.env.PORT = String(environment.PORT);
+process.env.ORIGIN = environment.ORIGIN;
+process.env.BODY_SIZE_LIMIT = environment.BODY_SIZE_LIMIT;
+process.env.SHUTDOWN_TIMEOUT = String(environment.SHUTDOWN_TIMEOUT);
+if (environment.ADDRESS_HEADER) process.env.ADDRESS_HEADER = environment.ADDRESS_HEADER;
+
+await import(pathToFileURL(path.join(root, 'build/index.js')).href);
+process.stdout.write(`Watersmeet is ready: ${environment.ORIGIN}\n`);

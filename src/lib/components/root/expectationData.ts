@@ -1,0 +1,58 @@
+import { leafFacts, LEAVES, type Leaf } from '$lib/anatomy/sequence';
+import type { ExpectationData } from '$lib/drawing/expectation';
+import { mm, percent, range } from '$lib/strings/format';
+import { root as words } from '$lib/strings/root';
+
+/** A length or level with its standing, as the drawing needs it. */
+interface Placed {
+	mm: number;
+	range: [number, number] | null;
+	source: string | null;
+	verified: boolean;
+}
+
+/**
+ * Turns an expectation and the published shape of its root into what the drawing takes.
+ * A published level of the confluence is that of canals which share an exit, so only those sequences are drawn at it.
+ */
+export function toExpectationData(
+	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[],
+	shape: { length: Placed; confluence: Placed | null }
+): ExpectationData {
+	const isLeaf = (sequence: string): sequence is Leaf => (LEAVES as readonly string[]).includes(sequence);
+	return {
+		sequences: sequences.map(({ sequence, mean, interval }) => ({
+			sequence,
+			probability: mean,
+			interval,
+			joinLevelMm:
+				isLeaf(sequence) && leafFacts(sequence).fate === 'shared-exit' && shape.confluence
+					? shape.confluence.mm
+					: null
+		})),
+		rootLengthMm: shape.length.mm,
+		lengthAssumed: !shape.length.verified
+	};
+}
+
+/** What the drawing says, in words: the commonest sequences with their ranges. */
+export function describeExpectation(expectation: {
+	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[];
+}): string {
+	const likely = [...expectation.sequences]
+		.sort((a, b) => b.mean - a.mean)
+		.slice(0, 3)
+		.map(({ sequence, mean, interval }) => `${sequence}: ${percent(mean)} (${range(interval)})`);
+	return words.drawingText(likely.join('; '));
+}
+
+/** How the length and the level of the drawing are known, a sentence each. */
+export function describeShape(shape: { length: Placed; confluence: Placed | null }): string[] {
+	const { length, confluence } = shape;
+	const sentences: string[] = [];
+	if (length.source === null) sentences.push(words.lengthAssumed(mm(length.mm)));
+	else if (!length.verified) sentences.push(words.lengthUnverified(mm(length.mm)));
+	if (confluence?.range)
+		sentences.push(words.levelRange(confluence.range[0], confluence.range[1], mm(confluence.mm)));
+	return sentences;
+}

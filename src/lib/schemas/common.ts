@@ -1,0 +1,101 @@
+import { z } from 'zod';
+
+/** Methods of the evidence files, in the order screens offer them. */
+export const METHODS = [
+	'micro-ct',
+	'clearing',
+	'sectioning',
+	'cbct',
+	'microscope',
+	'clinical',
+	'mixed',
+	'radiograph',
+	'review'
+] as const;
+
+/** Methods an estimate can be narrowed to: everything but published reviews, which are never pooled. */
+export const POOLED_METHODS = METHODS.filter((method) => method !== 'review');
+
+export const probabilitySchema = z.number().min(0).max(1).describe('A probability, 0 to 1, unrounded');
+
+export const intervalSchema = z
+	.tuple([probabilitySchema, probabilitySchema])
+	.describe('[lower, upper], 95 % unless a level was asked for');
+
+export const summarySchema = z
+	.object({ mean: probabilitySchema, median: probabilitySchema, interval: intervalSchema })
+	.describe('Posterior mean, median and equal-tailed interval of a proportion');
+
+export const tauSchema = z
+	.object({ mean: z.number(), median: z.number(), interval: z.tuple([z.number(), z.number()]) })
+	.describe('Spread between populations, logit scale');
+
+export const estimateSchema = z.object({ mean: probabilitySchema, interval: intervalSchema });
+
+const year = z.coerce
+	.number('Give a year, such as 1998.')
+	.int('Give a year, such as 1998.')
+	.min(1900, 'Give a year from 1900.')
+	.max(2100, 'Give a year up to 2100.');
+
+const total = z.coerce
+	.number('Give a whole number, at least 1.')
+	.int('Give a whole number, at least 1.')
+	.min(1, 'Give a whole number, at least 1.')
+	.max(10_000_000, 'Give a number up to 10,000,000.');
+
+const methodSchema = z.enum(POOLED_METHODS, `The method must be one of ${POOLED_METHODS.join(', ')}.`);
+const countrySchema = z
+	.string()
+	.regex(/^[A-Z]{3}$/, 'Give a country as its three capital letters (ISO 3166 alpha-3), such as BRA.');
+const sourceIdSchema = z.string().min(1, 'Give a source id.').max(200, 'A source id is shorter.');
+
+const yearsInOrder = (filters: { yearFrom?: number; yearTo?: number }) =>
+	filters.yearFrom === undefined || filters.yearTo === undefined || filters.yearFrom <= filters.yearTo;
+const YEARS_MESSAGE = { path: ['yearTo'], message: 'The last year must not lie before the first.' };
+
+/** Filters as they stand in a request body. */
+export const filtersSchema = z
+	.strictObject({
+		methods: z.array(methodSchema).max(20).optional(),
+		countries: z.array(countrySchema).max(100).optional(),
+		yearFrom: year.optional(),
+		yearTo: year.optional(),
+		minTotal: total.optional(),
+		exclude: z.array(sourceIdSchema).max(500).optional()
+	})
+	.refine(yearsInOrder, YEARS_MESSAGE)
+	.describe('Narrow the samples that enter; an absent field narrows nothing');
+
+/** Filters as they stand in an address: `?method=cbct&method=micro-ct&country=BRA&minTotal=100`. */
+export const filtersQuerySchema = z
+	.strictObject({
+		method: z.array(methodSchema).max(20).optional(),
+		country: z.array(countrySchema).max(100).optional(),
+		yearFrom: year.optional(),
+		yearTo: year.optional(),
+		minTotal: total.optional(),
+		exclude: z.array(sourceIdSchema).max(500).optional()
+	})
+	.refine(yearsInOrder, YEARS_MESSAGE);
+
+/** Names of the address that may repeat. */
+export const FILTER_LISTS = ['method', 'country', 'exclude'] as const;
+
+/** Filters in force, as the estimator takes them. */
+export type FiltersInForce = z.infer<typeof filtersSchema>;
+
+/** The filters of an address as the body writes them. */
+export function filtersOfQuery(query: z.infer<typeof filtersQuerySchema>): FiltersInForce {
+	const { method, country, ...rest } = query;
+	return { ...rest, ...(method && { methods: method }), ...(country && { countries: country }) };
+}
+
+/** RFC 9457, as every failure under /api/v1 is answered. */
+export const problemSchema = z.object({
+	type: z.string(),
+	title: z.string(),
+	status: z.number().int(),
+	detail: z.string(),
+	errors: z.array(z.object({ path: z.string(), message: z.string() }))
+});

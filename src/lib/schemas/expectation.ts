@@ -1,0 +1,66 @@
+import { z } from 'zod';
+import { estimateSchema, filtersSchema, probabilitySchema, summarySchema, tauSchema } from './common';
+import { featureSchema, studySchema } from './teeth';
+
+const observedSchema = z.object({ min: probabilitySchema, max: probabilitySchema }).nullable();
+
+/** One canal sequence of a root with its probability in a new population. */
+export const sequenceSchema = estimateSchema.extend({
+	sequence: z.string(),
+	labels: z.object({
+		vertucci: z.string().nullable(),
+		weine: z.string().nullable(),
+		sertBayirli: z.string().nullable(),
+		ahmed: z.string()
+	}),
+	fate: z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']),
+	observed: z
+		.object({ min: probabilitySchema, max: probabilitySchema, studies: z.number().int() })
+		.nullable()
+		.describe('Range over the samples that name this sequence; null if none does')
+});
+
+export const questionSchema = z.object({
+	id: z.string(),
+	text: z.string(),
+	borrowed: z.boolean().describe('No sample of this root answers: the figures are the other roots’'),
+	studies: z.array(studySchema),
+	pooled: summarySchema.describe('The middle population'),
+	predictive: summarySchema.describe('A new population, from which the next patient comes'),
+	tau: tauSchema,
+	observed: observedSchema
+});
+export type QuestionDto = z.infer<typeof questionSchema>;
+
+const countSchema = estimateSchema.extend({ count: z.number().int() });
+
+export const fatesSchema = z.partialRecord(
+	z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']),
+	estimateSchema
+);
+
+export const expectationSchema = z.object({
+	tooth: z.string(),
+	root: z.string(),
+	filters: filtersSchema,
+	tableRevision: z.number().int(),
+	evidence: z.object({
+		studies: z.number().int(),
+		roots: z.number().int().describe('Roots counted by the largest sample of each source'),
+		sources: z.array(z.string())
+	}),
+	sequences: z.array(sequenceSchema),
+	orifices: z.array(countSchema),
+	exits: z.array(countSchema),
+	fates: fatesSchema,
+	features: z.array(featureSchema),
+	questions: z.array(questionSchema).length(9),
+	reviews: z.array(
+		z.object({ source: z.string(), entry: z.number().int(), question: z.string(), percent: z.number() })
+	),
+	notPooled: z.array(z.object({ source: z.string(), entry: z.number().int(), reason: z.string() })),
+	coverage: z
+		.object({ level95: probabilitySchema, level80: probabilitySchema, samples: z.number().int() })
+		.nullable()
+});
+export type ExpectationDto = z.infer<typeof expectationSchema>;

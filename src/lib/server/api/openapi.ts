@@ -1,0 +1,96 @@
+import { z } from 'zod';
+import { problemSchema } from '$lib/schemas/common';
+import { operations, type Operation } from './operations';
+
+type Json = Record<string, unknown>;
+
+const REASONS: Record<number, string> = {
+	400: 'Not valid JSON',
+	404: 'Unknown tooth, root or id',
+	413: 'The body is too large',
+	415: 'The body is not application/json',
+	422: 'A value is missing or out of range; errors name the field',
+	429: 'Too many requests; Retry-After says when to try again'
+};
+
+const PATH_PARAMETERS: Record<string, Json> = {
+	tooth: { type: 'string', description: 'Slug of a tooth, as /teeth lists it', example: 'maxillary-first-molar' },
+	root: { type: 'string', description: 'Id of a root, as /teeth lists it', example: 'MB' },
+	id: { type: 'string', description: 'Id of the entry or source' }
+};
+
+/** The OpenAPI 3.1 document of version 1, generated from the schemas that validate the requests. */
+export function openApiDocument(origin: string): Json {
+	const paths: Record<string, Json> = {};
+	for (const operation of operations) {
+		paths[operation.path] = { ...paths[operation.path], [operation.method]: describe(operation) };
+	}
+	return {
+		openapi: '3.1.0',
+		info: {
+			title: 'Watersmeet',
+			version: '1',
+			description:
+				'What the literature says of root canals, and how probable it is that two of them join. Lengths in mm, probabilities 0 to 1. ' +
+				'A probability from published samples is not a finding in a patient.'
+		},
+		servers: [{ url: `${origin}/api/v1` }],
+		paths,
+		components: { schemas: { Problem: jsonSchema(problemSchema, 'output') } }
+	};
+}
+
+function describe(operation: Operation): Json {
+	const failures = Object.fromEntries(
+		[...operation.failures, 429].map((status) => [
+			String(status),
+			{
+				description: REASONS[status],
+				content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } }
+			}
+		])
+	);
+	const content = (schema: Json, example?: unknown) => ({
+		'application/json': { schema, ...(example !== undefined && { example }) }
+	});
+	return {
+		operationId: operation.id,
+		summary: operation.summary,
+		parameters: [...pathParameters(operation.path), ...queryParameters(operation.query)],
+		...(operation.body && {
+			requestBody: {
+				required: true,
+				content: content(jsonSchema(operation.body, 'input'), operation.example)
+			}
+		}),
+		responses: {
+			'200': { description: 'The answer', content: content(jsonSchema(operation.response, 'output')) },
+			...failures
+		}
+	};
+}
+
+function pathParameters(path: string): Json[] {
+	return [...path.matchAll(/\{(\w+)\}/g)].map(([, name]) => {
+		const { description, example, ...schema } = PATH_PARAMETERS[name];
+		return { name, in: 'path', required: true, description, ...(example !== undefined && { example }), schema };
+	});
+}
+
+function queryParameters(query: z.ZodType | undefined): Json[] {
+	if (!query) return [];
+	const schema = jsonSchema(query, 'input') as { properties?: Record<string, Json>; required?: string[] };
+	return Object.entries(schema.properties ?? {}).map(([name, property]) => ({
+		name,
+		in: 'query',
+		required: schema.required?.includes(name) ?? false,
+		...(property.description !== undefined && { description: property.description }),
+		schema: property
+	}));
+}
+
+function jsonSchema(schema: z.ZodType, io: 'input' | 'output'): Json {
+	// OpenAPI 3.1 takes JSON Schema 2020-12 as it is; the dialect is the document's, not each schema's.
+	const { $schema: _, ...rest } = z.toJSONSchema(schema, { io, unrepresentable: 'any' });
+	return rest;
+}

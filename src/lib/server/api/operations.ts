@@ -1,0 +1,128 @@
+import type { z } from 'zod';
+import { filtersQuerySchema } from '$lib/schemas/common';
+import { confluenceRequestSchema, confluenceResponseSchema } from '$lib/schemas/confluence';
+import { expectationSchema } from '$lib/schemas/expectation';
+import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
+import {
+	entriesQuerySchema,
+	entriesSchema,
+	entryWithRevisionsSchema,
+	healthSchema,
+	sourceSchema,
+	sourcesQuerySchema,
+	sourcesSchema
+} from '$lib/schemas/table';
+import { teethSchema, toothSchema } from '$lib/schemas/teeth';
+
+/** One operation of the API, as the OpenAPI document describes it and as its endpoint validates it. */
+export interface Operation {
+	method: 'get' | 'post';
+	path: string;
+	id: string;
+	summary: string;
+	query?: z.ZodType;
+	body?: z.ZodType;
+	/** A request that works on the shipped table, shown as the example. */
+	example?: unknown;
+	response: z.ZodType;
+	/** Statuses other than 200 that the operation may answer with, besides 429. */
+	failures: number[];
+}
+
+const slug = { tooth: 'maxillary-first-molar', root: 'MB' };
+
+/** Every operation of version 1, in the order the document lists them. */
+export const operations: Operation[] = [
+	{
+		method: 'get',
+		path: '/teeth',
+		id: 'listTeeth',
+		summary: 'The sixteen types of permanent tooth, their numbers and roots',
+		response: teethSchema,
+		failures: []
+	},
+	{
+		method: 'get',
+		path: '/teeth/{tooth}',
+		id: 'getTooth',
+		summary: 'One tooth: root counts, canal counts, features, lengths, roots',
+		response: toothSchema,
+		failures: [404]
+	},
+	{
+		method: 'get',
+		path: '/teeth/{tooth}/roots/{root}/expectation',
+		id: 'getExpectation',
+		summary: 'What canals to expect in a root, and how surely',
+		query: filtersQuerySchema,
+		response: expectationSchema,
+		failures: [404, 422]
+	},
+	{
+		method: 'get',
+		path: '/entries',
+		id: 'listEntries',
+		summary: 'Published entries of the table, filtered, sorted, in pages',
+		query: entriesQuerySchema,
+		response: entriesSchema,
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/entries/{id}',
+		id: 'getEntry',
+		summary: 'One entry with its revisions',
+		response: entryWithRevisionsSchema,
+		failures: [404]
+	},
+	{
+		method: 'get',
+		path: '/sources',
+		id: 'listSources',
+		summary: 'The sources of the table, in pages',
+		query: sourcesQuerySchema,
+		response: sourcesSchema,
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/sources/{id}',
+		id: 'getSource',
+		summary: 'One source with its CSL-JSON',
+		response: sourceSchema,
+		failures: [404]
+	},
+	{
+		method: 'post',
+		path: '/pool',
+		id: 'pool',
+		summary: 'Pools proportions of your own: the middle population, a new one, and the spread between',
+		body: poolRequestSchema,
+		example: { studies: [{ events: 16, total: 17 }, { events: 10, total: 12 }, { events: 4, total: 8 }] },
+		response: poolResponseSchema,
+		failures: [400, 413, 415, 422]
+	},
+	{
+		method: 'post',
+		path: '/confluence',
+		id: 'confluence',
+		summary: 'How probable it is that the canals of a root join, given what was found',
+		body: confluenceRequestSchema,
+		example: {
+			...slug,
+			canals: 2,
+			search: 'microscope',
+			findings: [{ test: 'cone-mark', result: 'positive' }]
+		},
+		response: confluenceResponseSchema,
+		failures: [400, 404, 413, 415, 422]
+	},
+	{
+		method: 'get',
+		path: '/health',
+		id: 'health',
+		summary: 'Whether the server is ready, and the revision of its table',
+		response: healthSchema,
+		failures: []
+	}
+];

@@ -1,0 +1,38 @@
+import path from 'node:path';
+import type { Sequelize } from 'sequelize';
+import { openDatabase } from './connection';
+import { migrate } from './migrate';
+import { defineLiterature } from './models/literature';
+import { defineSupplements } from './models/supplements';
+
+/** Name of the database file inside DATA_DIR. */
+export const DATABASE_FILE = 'watersmeet.sqlite';
+
+// Hot reload evaluates this module again; the connection must outlive that.
+const held = globalThis as typeof globalThis & { watersmeetDatabase?: Promise<Sequelize> };
+
+/**
+ * Migrates and opens the database of a data folder, with every model tied to it.
+ * @param dataDir folder of the database file; made if it does not exist
+ */
+export async function connect(dataDir: string): Promise<Sequelize> {
+	const file = path.join(dataDir, DATABASE_FILE);
+	await migrate(file);
+	const sequelize = openDatabase(file);
+	defineLiterature(sequelize);
+	defineSupplements(sequelize);
+	return sequelize;
+}
+
+/** The server's one connection; opened by the first call. */
+export function database(dataDir: string): Promise<Sequelize> {
+	held.watersmeetDatabase ??= connect(dataDir);
+	return held.watersmeetDatabase;
+}
+
+/** Closes the server's connection, if there is one. */
+export async function closeDatabase(): Promise<void> {
+	const open = held.watersmeetDatabase;
+	held.watersmeetDatabase = undefined;
+	await (await open)?.close();
+}

@@ -1,0 +1,120 @@
+import { leafFacts } from '$lib/anatomy/sequence';
+import type { Fate, Leaf } from '$lib/anatomy/sequence';
+import type { Characteristics } from './characteristics';
+import { MOST_CANALS, possibleLeaves } from './confluenceQuestion';
+import type { ConfluenceQuestion, Finding } from './confluenceQuestion';
+import { estimatorOf } from './estimates';
+import type { Estimate, Estimator } from './estimates';
+import type { Inquiry } from './inquiry';
+import { combine, isthmusOf, likelihoodsOf, searchOf } from './likelihoods';
+import type { Evidence, FindingLikelihood, Superseded } from './likelihoods';
+import { decide, rankNext } from './next';
+import type { Decision, NextTest } from './next';
+import { exactWeights, expectedLeaves, fateShares, fatesOf } from './posterior';
+import type { FateProbabilities } from './posterior';
+import type { RootModel } from './types';
+
+/** What becomes of the canals of a root, and whether one is still hidden. */
+interface ConfluenceOutlook {
+	/** 'one-canal' only where a width of 1 is possible. */
+	fates: Partial<Record<Fate, Estimate>>;
+	/** More canals than were negotiated; null for three, where the table cannot say whether a fourth is there. */
+	anotherCanal: Estimate | null;
+}
+
+/** All that is said of a root: every figure a sum over its possible sequences. */
+interface ConfluencePicture extends ConfluenceOutlook {
+	/** The numbers of exits that are possible, 3 standing for three or more. */
+	exits: ({ count: number } & Estimate)[];
+	/** The possible leaves of the tree. */
+	sequences: ({ sequence: Leaf } & Estimate)[];
+}
+
+/** The answer to a question about one root. */
+export interface ConfluenceAnswer {
+	/** The same question (canals, orifices, search) without its findings. */
+	prior: ConfluenceOutlook;
+	posterior: ConfluencePicture;
+	/** Fates after each finding, in the order given. */
+	steps: { finding: Finding; fates: FateProbabilities }[];
+	/** The one of file contact and two files that did not count, since the other says more of the same mechanism. */
+	superseded: Superseded | null;
+	/** Findings (and 'isthmus', and the search) used whose characteristics are assumed, not published. */
+	assumed: string[];
+	next: NextTest[];
+	decision: Decision;
+}
+
+function outlookOf({ leaves, question }: Inquiry, estimate: Estimator): ConfluenceOutlook {
+	const fates = fatesOf(leaves).map((fate) => [fate, estimate((leaf) => leafFacts(leaf).fate === fate)]);
+	return {
+		fates: Object.fromEntries(fates) as ConfluenceOutlook['fates'],
+		anotherCanal:
+			question.canals < MOST_CANALS ? estimate((leaf) => leafFacts(leaf).width > question.canals) : null
+	};
+}
+
+function pictureOf(inquiry: Inquiry, estimate: Estimator): ConfluencePicture {
+	const { leaves } = inquiry;
+	const counts = [...new Set(leaves.map((leaf) => leafFacts(leaf).exits))].sort((a, b) => a - b);
+	return {
+		...outlookOf(inquiry, estimate),
+		exits: counts.map((count) => ({ count, ...estimate((leaf) => leafFacts(leaf).exits === count) })),
+		sequences: leaves.map((sequence) => ({ sequence, ...estimate((leaf) => leaf === sequence) }))
+	};
+}
+
+/** What of the evidence rests on assumed characteristics. */
+function assumedOf({ likelihoods, isthmus, search }: Evidence, question: ConfluenceQuestion): string[] {
+	const assumed: string[] = likelihoods.filter(({ assumed }) => assumed).map(({ test }) => test);
+	if (isthmus.beta?.assumed && likelihoods.some(({ test }) => test === 'draw')) assumed.push('isthmus');
+	if (search?.beta.assumed) assumed.push(`search-${question.search}`);
+	return assumed;
+}
+
+/**
+ * Answers a question about one root (inference, sections 3 and 4): exact posterior means, intervals, the fates
+ * after each finding, what to test next, and advice. Deterministic; the order of findings changes only `steps`.
+ * @param model the root under the person's filters; one without evidence is answered, without advice
+ * @param characteristics those of the root (characteristicsFor)
+ * @param question one that validateQuestion found nothing wrong with
+ * @throws RangeError for a question no sequence of the root fits, or a test the table has no characteristics of
+ */
+export function answerConfluence(
+	model: RootModel,
+	characteristics: Characteristics,
+	question: ConfluenceQuestion
+): ConfluenceAnswer {
+	const leaves = possibleLeaves(question);
+	const priors = expectedLeaves(model);
+	const context = { isthmus: isthmusOf(model, characteristics), search: searchOf(characteristics, question) };
+	const made = likelihoodsOf(question.findings, characteristics, context.isthmus);
+	const clear = (likelihood: FindingLikelihood | null) => likelihood !== null;
+	const inquiry: Inquiry = {
+		question,
+		leaves,
+		priors,
+		characteristics,
+		context,
+		entered: made.filter(clear),
+		hasEvidence: model.hasEvidence
+	};
+	const evidence = combine(inquiry.entered, context);
+	if (!exactWeights(leaves, priors, evidence).some((weight) => weight > 0)) {
+		throw new RangeError('No canal sequence of this root fits the question.');
+	}
+	const posterior = estimatorOf(model, leaves, priors, evidence);
+	const prior = inquiry.entered.length > 0 ? estimatorOf(model, leaves, priors, combine([], context)) : posterior;
+	return {
+		prior: outlookOf(inquiry, prior),
+		posterior: pictureOf(inquiry, posterior),
+		steps: question.findings.map((finding, index) => {
+			const soFar = combine(made.slice(0, index + 1).filter(clear), context);
+			return { finding, fates: fateShares(leaves, exactWeights(leaves, priors, soFar)) };
+		}),
+		superseded: evidence.superseded,
+		assumed: assumedOf(evidence, question),
+		next: rankNext(inquiry),
+		decision: decide(inquiry)
+	};
+}

@@ -1,0 +1,88 @@
+import { confluence as words } from '$lib/strings/confluence';
+import type { ConfluenceDto, ConfluenceRequest } from '$lib/schemas/confluence';
+import type { Root, Tooth } from '$lib/anatomy/teeth';
+import { knownRoot } from '../api/places';
+import { Problem } from '../api/problem';
+import type { ConfluenceAnswer } from './confluence';
+import { validateQuestion, type ConfluenceQuestion } from './confluenceQuestion';
+import { checkFilters } from './checkFilters';
+import { estimator } from './estimator';
+import type { RootModel } from './types';
+
+/**
+ * Answers a request of the estimator: which root it is about, whether it can be asked at all, and the answer in the API's shape.
+ * @throws Problem 404 for an unknown tooth or root, 422 naming the field for anything else that cannot be answered
+ */
+export async function confluenceOf(request: ConfluenceRequest): Promise<ConfluenceDto> {
+	const { tooth, root } = placeOf(request);
+	const { canals, orifices, search, threshold, findings } = request;
+	const question: ConfluenceQuestion = { canals, orifices, search, threshold, findings };
+	const mistakes = validateQuestion(question);
+	if (mistakes.length > 0) throw new Problem(422, 'This cannot be answered as it stands.', mistakes);
+	await checkFilters(request.filters ?? {});
+
+	const current = await estimator();
+	const { model } = await current.root(tooth.id, root.id, request.filters ?? {});
+	const answer = await current.confluence(model, question);
+	return toDto(answer, model, request, current.revision);
+}
+
+/** The root that a request is about: of a premolar, the number of roots seen decides. */
+function placeOf({ tooth: toothId, root: rootId, rootsSeen }: ConfluenceRequest): {
+	tooth: Tooth;
+	root: Root;
+} {
+	const place = knownRoot(toothId, rootId);
+	if (rootsSeen === undefined) return place;
+	const refuse = (message: string) => new Problem(422, message, [{ path: 'rootsSeen', message }]);
+	if (place.tooth.kind !== 'premolar') throw refuse('The number of roots is asked of premolars only.');
+	const oneRoot = rootId === 'whole' || rootId === 'single';
+	if (rootsSeen === 'one') {
+		if (!oneRoot)
+			throw refuse(`With one root there is no ${place.root.name.toLowerCase()}: ask for the root "single".`);
+		return knownRoot(toothId, 'single');
+	}
+	const two = place.tooth.roots.filter((id) => id !== 'whole' && id !== 'single');
+	if (oneRoot) throw refuse(`With two roots each is asked for alone: ask for the root ${two.join(' or ')}.`);
+	return place;
+}
+
+function toDto(
+	answer: ConfluenceAnswer,
+	model: RootModel,
+	request: ConfluenceRequest,
+	tableRevision: number
+): ConfluenceDto {
+	const sources = [
+		...new Set(model.questions.flatMap(({ evidence }) => evidence.map(({ source }) => source)))
+	].sort();
+	const { superseded, decision } = answer;
+	const supersededNote = (test: string) =>
+		superseded?.test === test ? words.notes.superseded(superseded.test, superseded.by) : null;
+	const notes = [words.notes.independent];
+	if (superseded) notes.push(words.notes.superseded(superseded.test, superseded.by));
+	if (request.canals === 3) notes.push(words.notes.threeCanals, words.notes.fourthCanal);
+	if (!model.hasEvidence) notes.push(words.notes.noEvidence);
+	return {
+		tableRevision,
+		prior: { fates: answer.prior.fates, anotherCanal: answer.prior.anotherCanal },
+		posterior: answer.posterior,
+		steps: answer.steps.map(({ finding, fates }) => ({ finding, fates, note: supersededNote(finding.test) })),
+		next: answer.next.map(({ test, bits, results, effort, risk }) => ({
+			test,
+			bits,
+			results,
+			effort,
+			note: words.risks[risk]
+		})),
+		decision: {
+			threshold: decision.threshold,
+			advice: decision.advice,
+			furtherTestingCanChangeIt: decision.advice === null ? null : decision.furtherTestingCanChangeIt
+		},
+		evidence: { studies: sources.length, sources },
+		assumed: answer.assumed,
+		notes,
+		cautions: request.canals > 1 ? words.cautions.joining : words.cautions.one
+	};
+}

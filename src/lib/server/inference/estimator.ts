@@ -1,0 +1,144 @@
+import os from 'node:os';
+import path from 'node:path';
+import { LRUCache } from 'lru-cache';
+import { Piscina } from 'piscina';
+import { Problem } from '../api/problem';
+import { serverDatabase } from '../db/server';
+import { readSnapshot, tableRevision, type TableSnapshot } from '../table/snapshot';
+import type { ConfluenceAnswer } from './confluence';
+import type { ConfluenceQuestion } from './confluenceQuestion';
+import { createTasks, type RootAnswer, type Tasks, type ToothAnswer } from './tasks';
+import type { Filters, RootModel, Study } from './types';
+
+/** The second build puts the worker here, beside kit's own server. */
+const WORKER_FILE = 'build/entries/inferenceWorker.js';
+/** Tasks that may wait; beyond them the server says that it is busy rather than run out of memory. */
+const MOST_WAITING = 500;
+/** Roots kept with their models: some 200 kB each. */
+const MOST_ROOTS = 300;
+const WORKER_IDLE_MS = 5 * 60 * 1000;
+const OLD_REVISION_GRACE_MS = 60 * 1000;
+
+/** The estimator over one revision of the table: its workers and what they have worked out. */
+class Estimator {
+	readonly revision: number;
+	readonly #run: <Name extends keyof Tasks>(
+		name: Name,
+		args: Parameters<Tasks[Name]>
+	) => Promise<ReturnType<Tasks[Name]>>;
+	readonly #workers: Piscina | null = null;
+	// Promises, not results: a question asked twice at once is worked out once.
+	readonly #roots = new LRUCache<string, Promise<RootAnswer>>({ max: MOST_ROOTS });
+	readonly #teeth = new Map<string, Promise<ToothAnswer>>();
+
+	constructor(snapshot: TableSnapshot) {
+		this.revision = snapshot.revision;
+		// The development server has no built worker; there the calculation runs in place.
+		if (import.meta.env.DEV) {
+			const tasks = createTasks(snapshot);
+			this.#run = async (name, args) =>
+				(tasks[name] as (...values: unknown[]) => ReturnType<Tasks[typeof name]>)(...args);
+			return;
+		}
+		const workers = new Piscina({
+			filename: path.resolve(WORKER_FILE),
+			workerData: snapshot,
+			minThreads: 1,
+			// One core is left to the requests themselves.
+			maxThreads: Math.max(1, os.availableParallelism() - 1),
+			idleTimeout: WORKER_IDLE_MS,
+			maxQueue: MOST_WAITING
+		});
+		this.#workers = workers;
+		this.#run = async (name, args) => {
+			if (workers.queueSize >= MOST_WAITING)
+				throw new Problem(503, 'Too many calculations are waiting. Try again in a moment.', [], {
+					'retry-after': '5'
+				});
+			return workers.run({ name, args }) as Promise<ReturnType<Tasks[typeof name]>>;
+		};
+	}
+
+	root(tooth: string, root: string, filters: Filters): Promise<RootAnswer> {
+		const kept = canonical(filters);
+		const key = JSON.stringify([tooth, root, kept]);
+		return remember(this.#roots, key, () => this.#run('root', [tooth, root, kept]));
+	}
+
+	tooth(tooth: string): Promise<ToothAnswer> {
+		return remember(this.#teeth, tooth, () => this.#run('tooth', [tooth]));
+	}
+
+	confluence(model: RootModel, question: ConfluenceQuestion): Promise<ConfluenceAnswer> {
+		return this.#run('confluence', [model, question]);
+	}
+
+	pool(studies: Study[], level?: number) {
+		return this.#run('pool', [studies, level]);
+	}
+
+	/** Lets running tasks finish, then ends the threads. */
+	async stop(): Promise<void> {
+		await this.#workers?.close();
+	}
+}
+
+type Keep<Value> = { get(key: string): Value | undefined; set(key: string, value: Value): unknown; delete(key: string): unknown };
+
+/** Computes once what is asked for under a key; a failure is not kept. */
+function remember<Value>(kept: Keep<Promise<Value>>, key: string, compute: () => Promise<Value>): Promise<Value> {
+	const known = kept.get(key);
+	if (known) return known;
+	const value = compute();
+	kept.set(key, value);
+	value.catch(() => kept.delete(key));
+	return value;
+}
+
+/** Filters in one order and without repeats or empty lists, so that equal filters are one key. */
+function canonical(filters: Filters): Filters {
+	const list = (values?: string[]) => (values?.length ? [...new Set(values)].sort() : undefined);
+	const all: Filters = {
+		methods: list(filters.methods),
+		countries: list(filters.countries),
+		yearFrom: filters.yearFrom,
+		yearTo: filters.yearTo,
+		minTotal: filters.minTotal,
+		exclude: list(filters.exclude)
+	};
+	return Object.fromEntries(Object.entries(all).filter(([, value]) => value !== undefined));
+}
+
+// Hot reload evaluates this module again; the threads must not be left behind.
+const held = globalThis as typeof globalThis & {
+	watersmeetEstimator?: { revision: number; ready: Promise<Estimator> };
+};
+
+/** The estimator over the newest revision; made on first use, and anew when the table has been published since. */
+export async function estimator(): Promise<Estimator> {
+	const revision = await tableRevision();
+	const present = held.watersmeetEstimator;
+	if (present && present.revision >= revision) return present.ready;
+	const ready = serverDatabase()
+		.then(readSnapshot)
+		.then((snapshot) => new Estimator(snapshot));
+	held.watersmeetEstimator = { revision, ready };
+	ready.catch(() => {
+		if (held.watersmeetEstimator?.ready === ready) held.watersmeetEstimator = undefined;
+	});
+	// Requests that began on the old revision may still have a second task to run on it.
+	if (present) setTimeout(() => void present.ready.then((old) => old.stop()), OLD_REVISION_GRACE_MS).unref();
+	return ready;
+}
+
+/** Ends the threads, if any were started. */
+export async function stopEstimator(): Promise<void> {
+	const present = held.watersmeetEstimator;
+	held.watersmeetEstimator = undefined;
+	await (await present?.ready)?.stop();
+}
+
+/** Pools proportions of a caller's own. */
+export async function poolOf(studies: Study[], level?: number) {
+	return (await estimator()).pool(studies, level);
+}

@@ -1,0 +1,25 @@
+import { environment } from './config';
+import { closeDatabase, database } from './db';
+import { stopEstimator } from './inference/estimator';
+import { log } from './log';
+import { readLiteratureFiles } from './table/literatureFiles';
+import { seedLiterature } from './table/seed';
+
+// Hot reload runs init again; the process must not collect listeners.
+const held = globalThis as typeof globalThis & { watersmeetStops?: boolean };
+
+/** Migrates, seeds, and only then lets the server listen; closes everything when the server has answered its last request. */
+export async function startUp(): Promise<void> {
+	const db = await database(environment.DATA_DIR);
+	const report = await seedLiterature(db, await readLiteratureFiles(environment.LITERATURE_DIR));
+	log.info(report, report.changed ? 'literature seeded' : 'literature unchanged');
+	if (report.unplaced > 0)
+		log.warn({ rows: report.unplaced }, 'rows of the literature could not be placed: see /table/not-placed');
+	if (held.watersmeetStops) return;
+	held.watersmeetStops = true;
+	process.once('sveltekit:shutdown' as 'exit', async () => {
+		await stopEstimator();
+		await closeDatabase();
+		log.info('stopped');
+	});
+}

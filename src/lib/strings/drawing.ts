@@ -1,0 +1,70 @@
+import type { Fate } from '$lib/anatomy/sequence';
+import type { PicturedFinding } from '$lib/drawing/findingPicture';
+import { count, mm, percent, range } from './format';
+
+/** A figure with its range, once where both read alike. */
+function figure(mean: number, interval: readonly [number, number]): string {
+	return percent(mean) === range(interval) ? percent(mean) : `${percent(mean)} (${range(interval)})`;
+}
+
+/** Interface texts of the drawings. */
+export const drawing = {
+	expectation: {
+		orifices: 'orifices',
+		rootEnd: 'root end',
+		rulerUnit: 'mm',
+		levelNotPublished: ['level not', 'published'],
+		levelPublished: (levelMm: number) => ['meet at', mm(levelMm)],
+		scale: 'Heights are to scale in mm above the root end; widths are not.',
+		length: (lengthMm: number, assumed: boolean) =>
+			assumed
+				? `No measured length is published for this root: ${mm(lengthMm)} is assumed.`
+				: `Length ${mm(lengthMm)}, the published mean.`,
+		legend: 'Canal sequences, from orifice to exit',
+		legendHint: 'Choose a sequence to see it alone; choose it again to see all.',
+		strength: 'The stronger a stream is drawn, the more probable it is.',
+		meeting: 'Canals meet here',
+		dashed: 'Dashed: they meet, but no source gives the level',
+		tooRare: 'too rare to draw',
+		probability: (probability: number, interval?: readonly [number, number]) =>
+			interval === undefined ? percent(probability) : figure(probability, interval)
+	},
+	fates: {
+		'one-canal': 'One canal',
+		'shared-exit': 'Meet and share one exit',
+		'meet-and-part': 'Meet, then part again',
+		'partly-shared': 'Meet in part, share some exits',
+		separate: 'Stay separate'
+	} satisfies Record<Fate, string>,
+	forest: {
+		source: 'Source',
+		place: 'Place in source',
+		country: 'Country',
+		method: 'Method',
+		counts: 'Of roots',
+		percent: 'Share (95 %)',
+		plot: 'Plot, 0 to 100 %',
+		of: (events: number, total: number) => `${count(events)} of ${count(total)}`,
+		share: (proportion: number, interval: readonly [number, number]) => figure(proportion, interval),
+		pooled: 'Pooled: the middle population',
+		predictive: 'Predicted: a new population',
+		noCountry: 'country not given',
+		intervals:
+			'Square: a study, larger with more roots; line: its 95 % interval (Wilson). Diamond: pooled. Band: where a new population is expected, 95 %.',
+		empty: 'No study answers this question for this root.'
+	},
+	interval: {
+		text: (label: string, mean: number, interval: readonly [number, number]) =>
+			`${label}: ${percent(mean)}, 95 % interval ${range(interval)}`
+	},
+	findings: {
+		'cone-mark':
+			'A cone to length in one canal, a file in the other: where the canals meet, the file marks the cone.',
+		draw: 'Irrigant is drawn from one canal and its level falls in the other.',
+		'file-contact': 'Files in both canals touch where the canals meet, and the apex locator shows it.',
+		'two-files':
+			'One file is at full length; the second stops where the canals meet, so its handle stands higher.',
+		'angled-radiograph': 'An angled radiograph on which the canals seem to run together.',
+		'cbct-reading': 'Three sections of a CBCT: two canals, two canals nearer, one canal.'
+	} satisfies Record<PicturedFinding, string>
+};

@@ -1,0 +1,74 @@
+/**
+ * How numbers read on screen: units always, false precision never. One place, so that a second language changes only
+ * this file and the catalogue of strings.
+ */
+
+const LOCALE = 'en-GB';
+/** A number and its unit stay on one line. */
+const NO_BREAK = '\u00a0';
+
+const whole = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 0 });
+const tenths = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 1 });
+
+/** Rare probabilities are said as 1 in one of these. */
+const RARE_DENOMINATORS = [10, 15, 20, 30, 50, 100];
+const TENTHS_FROM = 0.095;
+const TENTHS_TO = 0.925;
+const NEARLY_ALL_FROM = 0.975;
+
+/** The number of percent without its sign: whole, or "under 1" and "over 99"; 0 and 1 only when exact. */
+function percentNumber(probability: number): string {
+	if (probability > 0 && probability < 0.01) return 'under 1';
+	if (probability < 1 && probability > 0.99) return 'over 99';
+	return whole.format(probability * 100);
+}
+
+/**
+ * A probability as whole percent: `63 %`, `under 1 %`, `over 99 %`. The space does not break.
+ *
+ * @param probability 0..1
+ */
+export function percent(probability: number): string {
+	return `${percentNumber(probability)}${NO_BREAK}%`;
+}
+
+/**
+ * An interval of probabilities: `35 to 88 %`; one figure where both ends read alike.
+ *
+ * @param interval lower and upper end, 0..1
+ */
+export function range(interval: readonly [number, number]): string {
+	const [lower, upper] = [percentNumber(interval[0]), percentNumber(interval[1])];
+	return lower === upper ? percent(interval[0]) : `${lower} to ${upper}${NO_BREAK}%`;
+}
+
+/**
+ * A probability as people say it: `about 6 in 10`, `about 1 in 20`, `fewer than 1 in 100`, `nearly all`.
+ *
+ * @param probability 0..1; exactly 0 is `none`, exactly 1 is `all`
+ */
+export function inWords(probability: number): string {
+	if (probability <= 0) return 'none';
+	if (probability >= 1) return 'all';
+	if (probability < 0.01) return 'fewer than 1 in 100';
+	if (probability >= NEARLY_ALL_FROM) return 'nearly all';
+	if (probability > TENTHS_TO) return 'about 19 in 20';
+	if (probability >= TENTHS_FROM) return `about ${whole.format(probability * 10)} in 10`;
+	const distance = (denominator: number) => Math.abs(Math.log(probability * denominator));
+	const nearest = RARE_DENOMINATORS.reduce((best, next) => (distance(next) < distance(best) ? next : best));
+	return `about 1 in ${nearest}`;
+}
+
+/**
+ * A length in millimetres to one tenth: `3.7 mm`.
+ *
+ * @param length mm
+ */
+export function mm(length: number): string {
+	return `${tenths.format(length)}${NO_BREAK}mm`;
+}
+
+/** A count with its thousands set apart: `1,234`. */
+export function count(number: number): string {
+	return whole.format(number);
+}

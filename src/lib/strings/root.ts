@@ -1,0 +1,80 @@
+import { count } from './format';
+
+/** Words of the page of a root. */
+export const root = {
+	expectTitle: 'What to expect',
+	of: (tooth: string) => `of the ${tooth.toLowerCase()}`,
+	evidence: (studies: number, roots: number) =>
+		`From ${count(studies)} ${studies === 1 ? 'source' : 'sources'} and about ${count(roots)} roots.`,
+	noEvidence:
+		'No evidence: no sample of this root answers any question. Every figure here is borrowed from other roots, and no advice is given.',
+	noEvidenceShort: 'No evidence',
+	drawingLabel: (tooth: string, rootName: string) => `Canal sequences to expect: ${tooth}, ${rootName.toLowerCase()}`,
+	drawingText: (likely: string) => `The most probable sequences, from orifice to exit: ${likely}.`,
+	lengthAssumed: (length: string) => `No length of this root is in the table: ${length} is assumed.`,
+	lengthUnverified: (length: string) => `Length ${length}: a textbook average, recalled and unverified.`,
+	levelRange: (from: number, to: number, drawn: string) =>
+		`Where two canals share an exit, the published level of their confluence is ${from} to ${to} mm from the apex; drawn at its middle, ${drawn}.`,
+	sequencesTitle: 'Sequences, with their class names',
+	sequence: 'Sequence',
+	classes: 'Class',
+	fate: 'What becomes of the canals',
+	probability: 'In a new population (95 %)',
+	observed: 'Seen in samples',
+	observedRange: (range: string, studies: number) =>
+		`${range} in ${studies} ${studies === 1 ? 'sample' : 'samples'}`,
+	notObserved: 'not named by a sample',
+	vertucci: (name: string) => `Vertucci ${name}`,
+	weine: (name: string) => `Weine ${name}`,
+	sertBayirli: (name: string) => `Sert and Bayirli ${name}`,
+	rareNote:
+		'A rare sequence is counted with the one that starts and ends alike; the samples keep its own name.',
+	fatesTitle: 'What becomes of the canals',
+	countsTitle: 'Orifices and exits',
+	orifices: 'Orifices',
+	exits: 'Exits',
+	joinLink: 'Two canals found? Work out whether they join',
+	questionsTitle: 'Why: the questions and the samples behind them',
+	questionsNote:
+		'The distribution above is made of nine yes/no questions. Each is pooled over the samples that answer it; open one to see them. “A new population” is where the next patient comes from, so its range is the honest one.',
+	borrowed: 'borrowed from other roots: no sample here',
+	samples: (number: number) => `${number} ${number === 1 ? 'sample' : 'samples'}`,
+	middle: 'Middle population',
+	spread: (tau: string) => `Spread between populations (tau, logit scale): ${tau}`,
+	observedAll: (range: string) => `Seen in samples: ${range}`,
+	reviewsTitle: 'Published reviews, beside the pooled values',
+	reviewsNote: 'Reviews pool studies of their own; they are compared, never pooled again.',
+	review: 'Review',
+	question: 'Question',
+	share: 'Share',
+	notPooledTitle: (number: number) => `Not pooled: ${number} ${number === 1 ? 'entry' : 'entries'}, with the reason`,
+	notPooledNote: 'Shown so that nothing is hidden. An editor may complete or confirm them.',
+	source: 'Source',
+	entry: 'Entry',
+	reason: 'Why it is not pooled',
+	featuresTitle: 'Features of this root',
+	filters: {
+		title: 'Narrow the samples',
+		method: 'How it was seen',
+		country: 'Country',
+		anyCountry: 'Any country',
+		years: 'Published from',
+		yearTo: 'up to',
+		minTotal: 'At least so many roots or teeth',
+		apply: 'Narrow',
+		clear: 'Take all samples',
+		active: 'Only some samples are taken: the figures below are for these.',
+		wrong: 'These filters could not be used:'
+	},
+	methods: {
+		'micro-ct': 'micro-CT',
+		clearing: 'clearing',
+		sectioning: 'sectioning',
+		cbct: 'CBCT',
+		microscope: 'microscope',
+		clinical: 'clinical',
+		mixed: 'mixed methods',
+		radiograph: 'radiograph',
+		review: 'review'
+	} as Record<string, string>
+};

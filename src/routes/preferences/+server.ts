@@ -1,0 +1,27 @@
+import { redirect, type RequestHandler } from '@sveltejs/kit';
+import { preferencesSchema } from '$lib/schemas/preferences';
+import { PREFERENCES_COOKIE } from '$lib/server/hooks/preferences';
+
+const KEPT_SECONDS = 365 * 24 * 60 * 60;
+
+/** Keeps a visitor's preferences in a cookie and goes back to the page they came from. */
+export const POST: RequestHandler = async ({ request, cookies, url }) => {
+	const form = await request.formData();
+	const chosen = preferencesSchema.safeParse({ theme: form.get('theme'), numbers: form.get('numbers') });
+	if (chosen.success) {
+		cookies.set(PREFERENCES_COOKIE, JSON.stringify(chosen.data), {
+			path: '/',
+			maxAge: KEPT_SECONDS,
+			httpOnly: true,
+			sameSite: 'lax'
+		});
+	}
+	redirect(303, ownAddress(form.get('back'), url.origin));
+};
+
+/** The address to go back to, or the start page for anything that leads off this site. */
+function ownAddress(back: FormDataEntryValue | null, origin: string): string {
+	if (typeof back !== 'string' || !URL.canParse(back, origin)) return '/';
+	const target = new URL(back, origin);
+	return target.origin === origin ? target.pathname + target.search : '/';
+}

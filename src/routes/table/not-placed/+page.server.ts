@@ -1,0 +1,4 @@
+import { listUnplaced } from '$lib/server/table/unplaced';
+import type { PageServerLoad } from './$types';
+
+export const load: PageServerLoad = async () => ({ rows: await listUnplaced() });
