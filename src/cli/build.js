@@ -34,11 +34,15 @@ export function isBuilt(root) {
 export function build(root) {
 	for (const config of ['vite.config.ts', 'vite.entries.config.ts']) {
 		const vite = path.join(root, 'node_modules/vite/bin/vite.js');
-		const { status } = spawnSync(process.execPath, [vite, 'build', '--config', config, '--logLevel', 'warn'], {
-			cwd: root,
-			stdio: 'inherit',
-			env: { ...process.env, NODE_ENV: 'production' }
-		});
+		const { status } = spawnSync(
+			process.execPath,
+			[vite, 'build', '--config', config, '--logLevel', 'warn'],
+			{
+				cwd: root,
+				stdio: 'inherit',
+				env: { ...process.env, NODE_ENV: 'production' }
+			}
+		);
 		if (status !== 0) throw new Error(`The build (${config}) failed.`);
 	}
 	writeFileSync(path.join(root, STAMP), new Date().toISOString());
@@ -55,4 +59,5 @@ function newestMs(file) {
 	return readdirSync(file).reduce((newest, name) => Math.max(newest, newestMs(path.join(file, name))), 0);
 }
 
-if (process.argv[1] && path.resolve(process.argv[1]) === path.resolve(import.meta.filename)) build(process.cwd());
+if (process.argv[1] && path.resolve(process.argv[1]) === path.resolve(import.meta.filename))
+	build(process.cwd());

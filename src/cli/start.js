@@ -2,6 +2,7 @@
  * `npm start`: checks the environment, builds if the sources are newer than the build, and serves.
  * Plain JavaScript, because it runs before anything is built.
  */
+import { once } from 'node:events';
 import { mkdirSync } from 'node:fs';
 import path from 'node:path';
 import process from 'node:process';
@@ -14,7 +15,9 @@ process.chdir(root);
 
 const result = readEnvironment(process.env, root);
 if ('mistakes' in result) {
-	process.stderr.write(`Watersmeet cannot start:\n${result.mistakes.map((text) => `  - ${text}\n`).join('')}`);
+	process.stderr.write(
+		`Watersmeet cannot start:\n${result.mistakes.map((text) => `  - ${text}\n`).join('')}`
+	);
 	process.exit(1);
 }
 const { environment } = result;
@@ -38,5 +41,6 @@ process.env.BODY_SIZE_LIMIT = environment.BODY_SIZE_LIMIT;
 process.env.SHUTDOWN_TIMEOUT = String(environment.SHUTDOWN_TIMEOUT);
 if (environment.ADDRESS_HEADER) process.env.ADDRESS_HEADER = environment.ADDRESS_HEADER;
 
-await import(pathToFileURL(path.join(root, 'build/index.js')).href);
+const { server } = await import(pathToFileURL(path.join(root, 'build/index.js')).href);
+if (!server.server.listening) await once(server.server, 'listening');
 process.stdout.write(`Watersmeet is ready: ${environment.ORIGIN}\n`);

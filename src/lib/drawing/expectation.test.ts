@@ -15,7 +15,7 @@ function data(change: Partial<ExpectationData> = {}): ExpectationData {
 			{ sequence: '3', probability: 0.002, joinLevelMm: null }
 		],
 		rootLengthMm: 13,
-		lengthAssumed: false,
+		lengthStanding: 'published',
 		...change
 	};
 }

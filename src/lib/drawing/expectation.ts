@@ -13,12 +13,16 @@ interface ExpectedSequence {
 	interval?: readonly [number, number];
 }
 
+/** How the length of a root is known: published, recalled and not yet checked, or not at all. */
+export type LengthStanding = 'published' | 'unverified' | 'assumed';
+
 /** What the expectation drawing shows. */
 export interface ExpectationData {
 	sequences: readonly ExpectedSequence[];
 	rootLengthMm: number;
-	/** True when no measured length is published for this root, so that one is assumed. */
-	lengthAssumed: boolean;
+	lengthStanding: LengthStanding;
+	/** Where the published level of the confluence is a range, mm, the levels given with the sequences being its middle. */
+	joinRangeMm?: readonly [number, number] | null;
 }
 
 /** Size of a drawing in its own units; `compact` leaves out ruler and words, for tables and cards. */
@@ -48,6 +52,8 @@ interface LevelNote {
 	levelMm: number | null;
 	/** The line from the meeting to the words. */
 	leader: string;
+	/** A bracket over the published range of levels; null where there is none. */
+	range: { mm: readonly [number, number]; bracket: string } | null;
 	x: number;
 	y: number;
 }
@@ -184,6 +190,23 @@ function meetingsOf(
 	}));
 }
 
+/** A bracket beside the root, from the highest to the lowest published level. */
+function rangeOf(
+	{ joinRangeMm, rootLengthMm }: ExpectationData,
+	frame: RootFrame,
+	x: number
+): LevelNote['range'] {
+	if (!joinRangeMm) return null;
+	const [bottom, top] = joinRangeMm.map((level) => frame.yOf(level / rootLengthMm));
+	const bracket = line().digits(2)([
+		[x - 5, top],
+		[x, top],
+		[x, bottom],
+		[x - 5, bottom]
+	]);
+	return { mm: joinRangeMm, bracket: bracket ?? '' };
+}
+
 /** One note for each level at which canals last meet, from the top down, kept apart from each other. */
 function notesOf(
 	data: ExpectationData,
@@ -216,7 +239,13 @@ function notesOf(
 				[left - 18, from],
 				[left - 5, y]
 			]);
-			return { levelMm, leader: leader ?? '', x: left, y };
+			return {
+				levelMm,
+				leader: leader ?? '',
+				range: levelMm === null ? null : rangeOf(data, frame, left - 18),
+				x: left,
+				y
+			};
 		});
 }
 

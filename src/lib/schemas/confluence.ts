@@ -36,7 +36,10 @@ export const confluenceRequestSchema = z.strictObject({
 	root: z.string('Name the root, such as MB.'),
 	canals: count('canals negotiated'),
 	orifices: count('orifices seen').optional(),
-	rootsSeen: z.enum(['one', 'two'], 'Say one or two.').optional().describe('Premolars: how many roots are seen'),
+	rootsSeen: z
+		.enum(['one', 'two'], 'Say one or two.')
+		.optional()
+		.describe('Premolars: how many roots are seen'),
 	search: z.enum(SEARCHES, `The search must be one of ${SEARCHES.join(', ')}.`).optional(),
 	filters: filtersSchema.optional(),
 	threshold: z
@@ -69,7 +72,11 @@ export const confluenceResponseSchema = z.object({
 			test: z.enum(TESTS),
 			bits: z.number().min(0),
 			results: z.array(
-				z.object({ result: z.enum(['positive', 'negative']), probability: probabilitySchema, fates: fateMeans })
+				z.object({
+					result: z.enum(['positive', 'negative']),
+					probability: probabilitySchema,
+					fates: fateMeans
+				})
 			),
 			effort: z.string(),
 			note: z.string()

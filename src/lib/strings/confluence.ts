@@ -46,7 +46,10 @@ const tests: Record<Test, { name: string; how: string; positive: string; negativ
 
 const fates: Record<Fate, { name: string; meaning: string }> = {
 	'one-canal': { name: 'One canal', meaning: 'There is only one canal in this root.' },
-	'shared-exit': { name: 'Meet and share one exit', meaning: 'The canals come together and end in one exit.' },
+	'shared-exit': {
+		name: 'Meet and share one exit',
+		meaning: 'The canals come together and end in one exit.'
+	},
 	'meet-and-part': {
 		name: 'Meet, then part again',
 		meaning: 'They come together and end apart: each needs its full length.'
@@ -69,7 +72,10 @@ export const confluence = {
 		'microscope-troughing': 'Microscope with troughing',
 		cbct: 'CBCT'
 	} satisfies Record<Search, string>,
-	results: { positive: 'Positive', negative: 'Negative', unclear: 'Unclear' } satisfies Record<Result, string>,
+	results: { positive: 'Positive', negative: 'Negative', unclear: 'Unclear' } satisfies Record<
+		Result,
+		string
+	>,
 	risks: { none: 'no radiation', radiation: 'radiation: follow local imaging guidance' },
 	notes: {
 		independent: 'Findings are taken as independent of each other, given what the canals do.',
@@ -77,7 +83,8 @@ export const confluence = {
 			`${tests[test].name} and ${tests[by].name.toLowerCase()} rest on the same mechanism: only ${tests[by].name.toLowerCase()}, which tells more, is counted.`,
 		threeCanals: 'With three canals the answer is about the root as a whole, whichever pair was tested.',
 		fourthCanal: 'The table cannot say whether a fourth canal is there.',
-		noEvidence: 'No evidence: no sample of this root answers any question. The figures are borrowed from other roots, and no advice is given.'
+		noEvidence:
+			'No evidence: no sample of this root answers any question. The figures are borrowed from other roots, and no advice is given.'
 	},
 	cautions: {
 		one: [

@@ -1,4 +1,5 @@
 import type { Fate } from '$lib/anatomy/sequence';
+import type { LengthStanding } from '$lib/drawing/expectation';
 import type { PicturedFinding } from '$lib/drawing/findingPicture';
 import { count, mm, percent, range } from './format';
 
@@ -14,12 +15,19 @@ export const drawing = {
 		rootEnd: 'root end',
 		rulerUnit: 'mm',
 		levelNotPublished: ['level not', 'published'],
-		levelPublished: (levelMm: number) => ['meet at', mm(levelMm)],
+		levelPublished: (levelMm: number, rangeMm?: readonly [number, number]) => [
+			'meet at',
+			rangeMm ? `${rangeMm[0]} to ${mm(rangeMm[1])}` : mm(levelMm)
+		],
+		levelRange: ([from, to]: readonly [number, number], drawnMm: number) =>
+			`The published level of the confluence is a range, ${from} to ${mm(to)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
 		scale: 'Heights are to scale in mm above the root end; widths are not.',
-		length: (lengthMm: number, assumed: boolean) =>
-			assumed
-				? `No measured length is published for this root: ${mm(lengthMm)} is assumed.`
-				: `Length ${mm(lengthMm)}, the published mean.`,
+		length: (lengthMm: number, standing: LengthStanding) =>
+			({
+				published: `Length ${mm(lengthMm)}, a published mean.`,
+				unverified: `Length ${mm(lengthMm)}: unverified, recalled and not yet checked against its source.`,
+				assumed: `No length of this root is in the table: ${mm(lengthMm)} is assumed.`
+			})[standing],
 		legend: 'Canal sequences, from orifice to exit',
 		legendHint: 'Choose a sequence to see it alone; choose it again to see all.',
 		strength: 'The stronger a stream is drawn, the more probable it is.',

@@ -17,7 +17,8 @@ export const find = {
 	noResultsHint:
 		'Type a number (16, #3, UR6), a name (upper first molar) or a feature (mb2, middle mesial, c-shape).',
 	types: 'The sixteen types of tooth',
-	typesHint: 'Entries are the published rows of the table about that root; sources are the papers they come from.',
+	typesHint:
+		'Entries are the published rows of the table about that root; sources are the papers they come from.',
 	tooth: 'Tooth',
 	roots: 'Roots',
 	counts: (entries: number, studies: number) =>

@@ -4,7 +4,8 @@ export const join = {
 	lead: 'Say what you found. Each finding is a likelihood, never a verdict; the account shows what each one changed.',
 	formTitle: 'What was found',
 	canals: 'Canals negotiated in this root',
-	canalsNamed: (number: number, names: string) => (number === 1 ? 'One' : `${number === 2 ? 'Two' : 'Three'} (${names})`),
+	canalsNamed: (number: number, names: string) =>
+		number === 1 ? 'One' : `${number === 2 ? 'Two' : 'Three'} (${names})`,
 	search: 'How the root was searched for more',
 	searchHint: 'A search that misses easily proves little.',
 	notStated: 'Not stated',
@@ -22,7 +23,8 @@ export const join = {
 	startAgain: 'Start again',
 	waiting: 'Say how many canals you have negotiated; the answer appears here.',
 	answerTitle: 'How probable it is',
-	answerFor: (canals: number) => (canals === 1 ? 'with one canal negotiated' : `with ${canals} canals negotiated`),
+	answerFor: (canals: number) =>
+		canals === 1 ? 'with one canal negotiated' : `with ${canals} canals negotiated`,
 	meet: 'The canals meet somewhere',
 	before: (value: string) => `Before these findings: ${value}.`,
 	fates: 'What becomes of the canals',
@@ -37,15 +39,17 @@ export const join = {
 	start: 'Canals and search alone',
 	advice: {
 		title: 'What it means',
-		'treat-as-joined': 'Treat as joined: the canals share one exit with at least the probability you ask for.',
-		'treat-as-separate':
-			'Treat as separate: shape, clean and fill each canal to its own full length.',
+		'treat-as-joined':
+			'Treat as joined: the canals share one exit with at least the probability you ask for.',
+		'treat-as-separate': 'Treat as separate: shape, clean and fill each canal to its own full length.',
 		undecided: 'Undecided: plan as separate, and see below what would settle it.',
 		none: 'No advice: there is one canal, or no evidence on this root.',
 		threshold: (percent: string) =>
 			`The line is at ${percent} for a shared exit. It leans towards separate on purpose: shortening a separate canal leaves it unfilled, the worse mistake.`,
 		assumedRule:
 			'Findings whose accuracy is assumed must still carry the advice when their weight is halved (the square root of their likelihood ratio).',
+		heldBack:
+			'A shared exit is more probable than the line asks for, but this rests on findings whose accuracy is assumed, not published: with their weight halved the line is not reached.',
 		settled: 'Further testing will not change what you do.',
 		open: 'A further test could change this.'
 	},

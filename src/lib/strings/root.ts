@@ -9,12 +9,15 @@ export const root = {
 	noEvidence:
 		'No evidence: no sample of this root answers any question. Every figure here is borrowed from other roots, and no advice is given.',
 	noEvidenceShort: 'No evidence',
-	drawingLabel: (tooth: string, rootName: string) => `Canal sequences to expect: ${tooth}, ${rootName.toLowerCase()}`,
+	drawingLabel: (tooth: string, rootName: string) =>
+		`Canal sequences to expect: ${tooth}, ${rootName.toLowerCase()}`,
 	drawingText: (likely: string) => `The most probable sequences, from orifice to exit: ${likely}.`,
-	lengthAssumed: (length: string) => `No length of this root is in the table: ${length} is assumed.`,
-	lengthUnverified: (length: string) => `Length ${length}: a textbook average, recalled and unverified.`,
-	levelRange: (from: number, to: number, drawn: string) =>
-		`Where two canals share an exit, the published level of their confluence is ${from} to ${to} mm from the apex; drawn at its middle, ${drawn}.`,
+	shapeFrom: 'Drawn with:',
+	lengthFrom: 'length from',
+	levelFrom: 'level of the confluence from',
+	outside: (number: number) =>
+		`${number === 1 ? 'One sequence was' : `${number} sequences were`} seen more or less often in some sample than the range says. Such samples are mostly partial tables, which cannot answer every question below and are not pooled there; read the range with that in mind.`,
+	outsideMark: 'outside the range',
 	sequencesTitle: 'Sequences, with their class names',
 	sequence: 'Sequence',
 	classes: 'Class',
@@ -47,7 +50,8 @@ export const root = {
 	review: 'Review',
 	question: 'Question',
 	share: 'Share',
-	notPooledTitle: (number: number) => `Not pooled: ${number} ${number === 1 ? 'entry' : 'entries'}, with the reason`,
+	notPooledTitle: (number: number) =>
+		`Not pooled: ${number} ${number === 1 ? 'entry' : 'entries'}, with the reason`,
 	notPooledNote: 'Shown so that nothing is hidden. An editor may complete or confirm them.',
 	source: 'Source',
 	entry: 'Entry',

@@ -34,7 +34,8 @@ export const site = {
 		notFound: 'There is nothing at this address',
 		notFoundHint: 'Look up a tooth by its number or name, or start from the chart of all teeth.',
 		broken: 'Something went wrong',
-		brokenHint: 'Nothing you typed was stored or changed. Try again; if it stays, tell whoever runs this server the number below.',
+		brokenHint:
+			'Nothing you typed was stored or changed. Try again; if it stays, tell whoever runs this server the number below.',
 		id: 'Number',
 		back: 'Go to the chart of all teeth'
 	}

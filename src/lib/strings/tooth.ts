@@ -9,7 +9,8 @@ export const tooth = {
 		'Before you know how many roots there are, look at the whole tooth. With one root, look at the single root; with two, each root is a root of its own, and nothing joins between them.',
 	moreThanOne: 'More than one canal',
 	meet: 'The canals come together somewhere',
-	noEvidence: 'No evidence: no sample of this root answers any question. The figures shown are borrowed from other roots.',
+	noEvidence:
+		'No evidence: no sample of this root answers any question. The figures shown are borrowed from other roots.',
 	openRoot: 'What to expect, and why',
 	openJoin: 'Do they join?',
 	inOthers: (range: string) => `in other populations ${range}`,
@@ -31,7 +32,8 @@ export const tooth = {
 	expected: 'In a new population',
 	samples: (count: number) => `${count} ${count === 1 ? 'sample' : 'samples'}`,
 	lengths: 'Lengths',
-	lengthsNote: 'Published means and ranges, each from its own sample; working length is measured in the patient.',
+	lengthsNote:
+		'Published means and ranges, each from its own sample; working length is measured in the patient.',
 	lengthsEmpty: 'No length of this tooth is in the table.',
 	quantities: {
 		'tooth-length': 'Whole tooth',

@@ -11,7 +11,7 @@ const data: ExpectationData = {
 		{ sequence: '3', probability: 0.004, joinLevelMm: null }
 	],
 	rootLengthMm: 13,
-	lengthAssumed: true
+	lengthStanding: 'assumed'
 };
 const text = { label: 'Upper first molar, MB root', description: 'Most often one canal, about 4 in 10.' };
 const html = (change: object = {}) =>
@@ -52,7 +52,7 @@ describe('ExpectationDrawing without JavaScript', () => {
 		expect(html()).toContain('level not');
 		expect(html()).toContain('13 mm is assumed');
 		expect(html()).toContain('Canals meet here');
-		expect(html({ data: { ...data, lengthAssumed: false } })).toContain('the published mean');
+		expect(html({ data: { ...data, lengthStanding: 'published' } })).toContain('a published mean');
 	});
 
 	it('needs no style attribute', () => {

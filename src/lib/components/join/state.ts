@@ -38,7 +38,10 @@ export function readState(query: URLSearchParams): JoinState {
 		search: text('search'),
 		threshold: number('threshold')
 	};
-	return Object.assign(state, Object.fromEntries(Object.entries(optional).filter(([, value]) => value !== undefined)));
+	return Object.assign(
+		state,
+		Object.fromEntries(Object.entries(optional).filter(([, value]) => value !== undefined))
+	);
 }
 
 /** Writes a state as the query of an address; `readState` of it gives the state back. */
@@ -55,7 +58,12 @@ export function writeState(state: JoinState): string {
 }
 
 /** The state with one finding set, changed in place of an earlier one, or taken out (`result` empty). */
-export function withFinding(state: JoinState, test: Test, result: '' | (typeof RESULTS)[number], pair?: string): JoinState {
+export function withFinding(
+	state: JoinState,
+	test: Test,
+	result: '' | (typeof RESULTS)[number],
+	pair?: string
+): JoinState {
 	const finding = { test, result, ...(pair && { pair }) };
 	const made = state.findings.some((one) => one.test === test);
 	const findings = made

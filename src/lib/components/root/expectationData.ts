@@ -1,6 +1,6 @@
 import { leafFacts, LEAVES, type Leaf } from '$lib/anatomy/sequence';
 import type { ExpectationData } from '$lib/drawing/expectation';
-import { mm, percent, range } from '$lib/strings/format';
+import { percent, range } from '$lib/strings/format';
 import { root as words } from '$lib/strings/root';
 
 /** A length or level with its standing, as the drawing needs it. */
@@ -8,7 +8,14 @@ interface Placed {
 	mm: number;
 	range: [number, number] | null;
 	source: string | null;
+	locator: string | null;
 	verified: boolean;
+}
+
+/** What the drawing of a root takes from published measurements. */
+export interface RootShape {
+	length: Placed;
+	confluence: Placed | null;
 }
 
 /**
@@ -17,7 +24,7 @@ interface Placed {
  */
 export function toExpectationData(
 	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[],
-	shape: { length: Placed; confluence: Placed | null }
+	shape: RootShape
 ): ExpectationData {
 	const isLeaf = (sequence: string): sequence is Leaf => (LEAVES as readonly string[]).includes(sequence);
 	return {
@@ -31,7 +38,9 @@ export function toExpectationData(
 					: null
 		})),
 		rootLengthMm: shape.length.mm,
-		lengthAssumed: !shape.length.verified
+		lengthStanding:
+			shape.length.source === null ? 'assumed' : shape.length.verified ? 'published' : 'unverified',
+		joinRangeMm: shape.confluence?.range ?? null
 	};
 }
 
@@ -44,15 +53,4 @@ export function describeExpectation(expectation: {
 		.slice(0, 3)
 		.map(({ sequence, mean, interval }) => `${sequence}: ${percent(mean)} (${range(interval)})`);
 	return words.drawingText(likely.join('; '));
-}
-
-/** How the length and the level of the drawing are known, a sentence each. */
-export function describeShape(shape: { length: Placed; confluence: Placed | null }): string[] {
-	const { length, confluence } = shape;
-	const sentences: string[] = [];
-	if (length.source === null) sentences.push(words.lengthAssumed(mm(length.mm)));
-	else if (!length.verified) sentences.push(words.lengthUnverified(mm(length.mm)));
-	if (confluence?.range)
-		sentences.push(words.levelRange(confluence.range[0], confluence.range[1], mm(confluence.mm)));
-	return sentences;
 }

@@ -29,7 +29,10 @@ export function fieldErrors(error: z.ZodError): FieldError[] {
 		const path = issue.path.map(String);
 		// An unknown key's issue stands at its parent; the caller wants to know which key.
 		if (issue.code === 'unrecognized_keys')
-			return issue.keys.map((key) => ({ path: [...path, key].join('.'), message: 'This field is not known here.' }));
+			return issue.keys.map((key) => ({
+				path: [...path, key].join('.'),
+				message: 'This field is not known here.'
+			}));
 		return [{ path: path.join('.'), message: issue.message }];
 	});
 }
@@ -44,7 +47,8 @@ export async function readBody<Schema extends z.ZodType>(
 	limitBytes = BODY_LIMIT_BYTES
 ): Promise<z.infer<Schema>> {
 	const type = event.request.headers.get('content-type') ?? '';
-	if (!/^application\/json\s*(;|$)/i.test(type)) throw new Problem(415, 'Send the request as application/json.');
+	if (!/^application\/json\s*(;|$)/i.test(type))
+		throw new Problem(415, 'Send the request as application/json.');
 	const text = await readLimited(event.request, limitBytes);
 	let value: unknown;
 	try {
@@ -61,7 +65,8 @@ export async function readBody<Schema extends z.ZodType>(
  */
 export function validate<Schema extends z.ZodType>(schema: Schema, value: unknown): z.infer<Schema> {
 	const result = schema.safeParse(value);
-	if (!result.success) throw new Problem(422, 'Some values are missing or out of range.', fieldErrors(result.error));
+	if (!result.success)
+		throw new Problem(422, 'Some values are missing or out of range.', fieldErrors(result.error));
 	return result.data;
 }
 

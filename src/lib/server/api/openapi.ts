@@ -14,7 +14,11 @@ const REASONS: Record<number, string> = {
 };
 
 const PATH_PARAMETERS: Record<string, Json> = {
-	tooth: { type: 'string', description: 'Slug of a tooth, as /teeth lists it', example: 'maxillary-first-molar' },
+	tooth: {
+		type: 'string',
+		description: 'Slug of a tooth, as /teeth lists it',
+		example: 'maxillary-first-molar'
+	},
 	root: { type: 'string', description: 'Id of a root, as /teeth lists it', example: 'MB' },
 	id: { type: 'string', description: 'Id of the entry or source' }
 };
@@ -73,7 +77,14 @@ function describe(operation: Operation): Json {
 function pathParameters(path: string): Json[] {
 	return [...path.matchAll(/\{(\w+)\}/g)].map(([, name]) => {
 		const { description, example, ...schema } = PATH_PARAMETERS[name];
-		return { name, in: 'path', required: true, description, ...(example !== undefined && { example }), schema };
+		return {
+			name,
+			in: 'path',
+			required: true,
+			description,
+			...(example !== undefined && { example }),
+			schema
+		};
 	});
 }
 

@@ -98,7 +98,13 @@ export const operations: Operation[] = [
 		id: 'pool',
 		summary: 'Pools proportions of your own: the middle population, a new one, and the spread between',
 		body: poolRequestSchema,
-		example: { studies: [{ events: 16, total: 17 }, { events: 10, total: 12 }, { events: 4, total: 8 }] },
+		example: {
+			studies: [
+				{ events: 16, total: 17 },
+				{ events: 10, total: 12 },
+				{ events: 4, total: 8 }
+			]
+		},
 		response: poolResponseSchema,
 		failures: [400, 413, 415, 422]
 	},

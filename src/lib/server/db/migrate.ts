@@ -38,7 +38,10 @@ export async function migrate(file: string, migrations: Migration[] = shipped): 
 async function run(sequelize: Sequelize, name: string, statements: string[]) {
 	await sequelize.transaction(async (transaction) => {
 		for (const statement of statements) await sequelize.query(statement, { transaction });
-		const broken = await sequelize.query('PRAGMA foreign_key_check', { type: QueryTypes.SELECT, transaction });
+		const broken = await sequelize.query('PRAGMA foreign_key_check', {
+			type: QueryTypes.SELECT,
+			transaction
+		});
 		if (broken.length > 0) throw new Error(`Migration ${name} leaves ${broken.length} broken references.`);
 	});
 }

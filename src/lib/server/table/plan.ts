@@ -44,7 +44,16 @@ export interface Unplaced {
 	reason: string;
 }
 
-const SAMPLE_FIELDS = ['source_id', 'tooth', 'root', 'scope', 'country', 'method', 'subgroup', 'total'] as const;
+const SAMPLE_FIELDS = [
+	'source_id',
+	'tooth',
+	'root',
+	'scope',
+	'country',
+	'method',
+	'subgroup',
+	'total'
+] as const;
 const ENTRY_FIELDS = ['measure', 'locator', 'provenance'] as const;
 
 const digest = (parts: unknown) =>

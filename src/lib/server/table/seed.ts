@@ -28,7 +28,10 @@ export interface SeedReport {
  */
 export async function seedLiterature(db: Sequelize, files: LiteratureFiles): Promise<SeedReport> {
 	const latest = await TableRevision.findOne({ order: [['id', 'DESC']] });
-	const seeded = await TableRevision.findOne({ where: { seedDigest: { [Op.ne]: null } }, order: [['id', 'DESC']] });
+	const seeded = await TableRevision.findOne({
+		where: { seedDigest: { [Op.ne]: null } },
+		order: [['id', 'DESC']]
+	});
 	if (latest && seeded?.seedDigest === files.digest) {
 		return {
 			changed: false,

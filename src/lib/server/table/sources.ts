@@ -92,7 +92,9 @@ function toSourceSummary(row: SourceRow): SourceSummary {
 
 /** Family names as a citation in running text gives them: one, two, or the first "and others". */
 function authorsInShort(csl: CslSource): string {
-	const names = (csl.author ?? []).map(({ family, literal, given }) => family ?? literal ?? given ?? '').filter(Boolean);
+	const names = (csl.author ?? [])
+		.map(({ family, literal, given }) => family ?? literal ?? given ?? '')
+		.filter(Boolean);
 	if (names.length <= 2) return names.join(' and ');
 	return `${names[0]} and others`;
 }

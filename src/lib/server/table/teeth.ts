@@ -28,7 +28,11 @@ export async function listTeeth(): Promise<ToothSummary[]> {
 
 /** One tooth: its numbers, what was counted in it as a whole, its pooled features, its lengths. */
 export async function describeTooth(tooth: Tooth): Promise<ToothDto> {
-	const [summaries, current, measured] = await Promise.all([listTeeth(), estimator(), measurementsOf(tooth.id)]);
+	const [summaries, current, measured] = await Promise.all([
+		listTeeth(),
+		estimator(),
+		measurementsOf(tooth.id)
+	]);
 	const { rootCounts, canalCounts, features } = await current.tooth(tooth.id);
 	return {
 		...summaries.find(({ id }) => id === tooth.id)!,

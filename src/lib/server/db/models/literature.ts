@@ -167,10 +167,22 @@ export function defineLiterature(sequelize: Sequelize) {
 		{ sequelize, tableName: 'figure' }
 	);
 	Revision.init(
-		{ id: id(), entryId: integer(), number: integer(), at: text(), who: text(), before: TEXT, after: TEXT, why: text() },
+		{
+			id: id(),
+			entryId: integer(),
+			number: integer(),
+			at: text(),
+			who: text(),
+			before: TEXT,
+			after: TEXT,
+			why: text()
+		},
 		{ sequelize, tableName: 'revision' }
 	);
-	TableRevision.init({ id: id(), at: text(), why: text(), seedDigest: TEXT }, { sequelize, tableName: 'table_revision' });
+	TableRevision.init(
+		{ id: id(), at: text(), why: text(), seedDigest: TEXT },
+		{ sequelize, tableName: 'table_revision' }
+	);
 	UnplacedRow.init(
 		{ id: id(), file: text(), line: integer(), sourceId: text(), summary: text(), reason: text() },
 		{ sequelize, tableName: 'unplaced_row' }

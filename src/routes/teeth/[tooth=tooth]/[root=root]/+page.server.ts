@@ -26,20 +26,24 @@ export const load: PageServerLoad = async ({ params, url }) => {
 		filterErrors = problem.errors;
 		expectation = await expectationOf(tooth, root, {});
 	}
+	const shape = await rootShapeOf(tooth.id, root.id);
 	const cited = [
 		...expectation.questions.flatMap(({ studies }) => studies),
 		...expectation.features.flatMap(({ studies }) => studies),
 		...expectation.notPooled,
 		...expectation.reviews
 	].map(({ source }) => source);
+	for (const placed of [shape.length, shape.confluence]) if (placed?.source) cited.push(placed.source);
 	return {
 		tooth: { id: tooth.id, name: tooth.name },
 		root: { id: root.id, name: root.name },
 		expectation,
-		typed: Object.fromEntries([...new Set(url.searchParams.keys())].map((name) => [name, url.searchParams.getAll(name)])),
+		typed: Object.fromEntries(
+			[...new Set(url.searchParams.keys())].map((name) => [name, url.searchParams.getAll(name)])
+		),
 		filterErrors,
 		countries: await countriesOf(tooth.id),
-		shape: await rootShapeOf(tooth.id, root.id),
+		shape,
 		sources: await sourcesById([...new Set(cited)])
 	};
 };
@@ -47,6 +51,7 @@ export const load: PageServerLoad = async ({ params, url }) => {
 /** A form sends its empty fields too; they filter nothing. */
 function withoutBlanks(url: URL): URL {
 	const kept = new URL(url);
-	for (const [name, value] of url.searchParams) if (value.trim() === '') kept.searchParams.delete(name, value);
+	for (const [name, value] of url.searchParams)
+		if (value.trim() === '') kept.searchParams.delete(name, value);
 	return kept;
 }

@@ -6,6 +6,7 @@ import type { RequestEvent } from './$types';
 
 export const GET = endpoint<RequestEvent>(async ({ params }) => {
 	const source = await findSource(await serverDatabase(), params.id);
-	if (!source) throw new Problem(404, 'There is no source with this id.', [{ path: 'id', message: 'Unknown id.' }]);
+	if (!source)
+		throw new Problem(404, 'There is no source with this id.', [{ path: 'id', message: 'Unknown id.' }]);
 	return source;
 });

@@ -28,13 +28,15 @@ export const load: PageServerLoad = async ({ params, url }) => {
 			errors = problem.errors;
 		}
 	}
+	const shape = await rootShapeOf(tooth.id, root.id);
+	const shapeSources = [shape.length.source, shape.confluence?.source].filter((id) => typeof id === 'string');
 	return {
 		tooth: { id: tooth.id, name: tooth.name, kind: tooth.kind },
 		root: { id: root.id, name: root.name, canals: root.canals },
 		state,
 		answer,
 		errors,
-		shape: await rootShapeOf(tooth.id, root.id),
-		sources: await sourcesById(answer?.evidence.sources ?? [])
+		shape,
+		sources: await sourcesById(shapeSources)
 	};
 };
