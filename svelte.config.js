@@ -6,6 +6,13 @@ const config = {
 	preprocess: vitePreprocess(),
 	kit: {
 		adapter: adapter(),
+		typescript: {
+			// The tools' own settings are checked and linted as everything else is.
+			config: (config) => ({
+				...config,
+				include: [.../** @type {{ include: string[] }} */ (config).include, '../*.js', '../*.ts']
+			})
+		},
 		// Kit's own origin check answers before any hook; hooks/originGuard.ts does its work and more, in the API's words.
 		csrf: { trustedOrigins: ['*'] },
 		csp: {

@@ -18,7 +18,7 @@ export const palette = {
 		'sand-deep': '#c7ab74',
 		river: '#1d5c94',
 		'river-soft': '#d6e6f3',
-		coral: '#c03a26',
+		coral: '#b83723',
 		'coral-soft': '#f8ded8',
 		moss: '#3a6530',
 		'moss-soft': '#e0ecda',
@@ -72,8 +72,8 @@ export default {
 		extend: { minHeight: { touch: '2.75rem' }, minWidth: { touch: '2.75rem' } }
 	},
 	plugins: [
-		plugin(({ addBase }) => {
-			addBase({
+		plugin((api) => {
+			api.addBase({
 				':root': { ...variables('light'), 'color-scheme': 'light' },
 				'@media (prefers-color-scheme: dark)': {
 					':root': { ...variables('dark'), 'color-scheme': 'dark' }

@@ -1,3 +1,5 @@
+import type { Preferences } from '$lib/schemas/preferences';
+
 declare global {
 	namespace App {
 		interface Error {
@@ -7,7 +9,7 @@ declare global {
 		}
 		interface Locals {
 			requestId: string;
-			preferences: import('$lib/schemas/preferences').Preferences;
+			preferences: Preferences;
 		}
 	}
 }

@@ -8,7 +8,7 @@ import { answerConfluence } from '$lib/server/inference/confluence';
 import type { ConfluenceAnswer } from '$lib/server/inference/confluence';
 import type { Estimate } from '$lib/server/inference/estimates';
 import { validateQuestion } from '$lib/server/inference/confluenceQuestion';
-import type { ConfluenceQuestion, Finding, Search, Test } from '$lib/server/inference/confluenceQuestion';
+import type { ConfluenceQuestion, Finding, Test } from '$lib/server/inference/confluenceQuestion';
 import type { RootModel } from '$lib/server/inference/types';
 import { enumerate, simulate } from '../support/confluenceSimulation';
 import type { Scenario } from '../support/confluenceSimulation';
@@ -65,7 +65,7 @@ function scenarioOf(model: RootModel, groups: string[], question: ConfluenceQues
 	};
 }
 
-const SEARCHED: (Search | undefined)[] = [
+const SEARCHED: ConfluenceQuestion['search'][] = [
 	undefined,
 	'unaided',
 	'loupes',

@@ -86,7 +86,7 @@ function averages({ positive, meet, never, neverIsthmus }: Scenario['findings'][
 const isthmusMean = ({ isthmus }: Scenario) => (isthmus ? gridMean(isthmus) : 0.5);
 
 /** Without the weaker of file contact and two files. */
-export function countedFindings(scenario: Scenario): Scenario['findings'] {
+function countedFindings(scenario: Scenario): Scenario['findings'] {
 	const rivals = scenario.findings.filter(({ test }) => test === 'file-contact' || test === 'two-files');
 	if (rivals.length < 2) return scenario.findings;
 	const strength = (finding: Scenario['findings'][number]) => {

@@ -13,7 +13,7 @@ import type {
 /** The shipped characteristics of findings, read as the seed reads them. */
 export function shippedCharacteristics(): FindingCharacteristic[] {
 	const text = readFileSync('data/literature/finding-characteristics.csv', 'utf8');
-	const rows = parse(text, { columns: true, skip_empty_lines: true }) as Record<string, string>[];
+	const rows = parse<Record<string, string>>(text, { columns: true, skip_empty_lines: true });
 	const number = (value: string) => (value === '' ? null : Number(value));
 	return rows.map((row) => ({
 		finding: row.finding,
@@ -65,7 +65,8 @@ export function inventedRoot(
 			grid: grids[id],
 			evidence: [],
 			prior: noPrior,
-			borrowed: false
+			borrowed: false,
+			method: { shown: 'plain', logScore: null, offsets: [] }
 		})),
 		isthmus: isthmus && { ...unpooled, grid: isthmus, evidence: [] },
 		hasEvidence: true,

@@ -1,12 +1,12 @@
-import { readFileSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
 import { indexTable } from '$lib/server/inference/tableIndex';
 import type { TableIndex } from '$lib/server/inference/tableIndex';
 import type { ObservationRow, SourceFacts } from '$lib/server/inference/types';
 import { citable, yearOf } from '$lib/server/table/citable';
-import type { CitationFields } from '$lib/server/table/citable';
-import { readObservationRows } from '$lib/server/table/csvRows';
+import { readLiteratureFiles } from '$lib/server/table/literatureFiles';
+import { planSamples } from '$lib/server/table/plan';
 
-const FOLDER = new URL('../../data/literature/', import.meta.url);
+const files = await readLiteratureFiles(fileURLToPath(new URL('../../data/literature/', import.meta.url)));
 
 let entries = 0;
 
@@ -53,14 +53,28 @@ export function indexOf(table: ObservationRow[], sources: SourceFacts[] = []): T
 	return indexTable(table, [...named, ...sources]);
 }
 
-/** The shipped table: all rows, and every source as the inference knows it. */
+/** The shipped table as the seed plans it, entries numbered in order, and every source as the inference knows it. */
 export function shippedTable(): { rows: ObservationRow[]; sources: SourceFacts[] } {
-	const sources = JSON.parse(readFileSync(new URL('sources.json', FOLDER), 'utf8')) as (CitationFields & {
-		id: string;
-	})[];
+	const { samples } = planSamples(files.observations, new Set(files.sources.map(({ id }) => id)));
+	let number = 0;
 	return {
-		rows: readObservationRows(readFileSync(new URL('observations.csv', FOLDER), 'utf8')),
-		sources: sources.map((each) => ({
+		rows: samples.flatMap(({ sourceId, key: _, entries: planned, ...sample }) =>
+			planned.flatMap(({ locator, measure, provenance, figures }) => {
+				number += 1;
+				return figures.map(({ countDerived: __, ...figure }) => ({
+					...sample,
+					...figure,
+					entry: number,
+					source: sourceId,
+					locator,
+					measure,
+					provenance,
+					verified: provenance !== 'memory',
+					poolable: null
+				}));
+			})
+		),
+		sources: files.sources.map((each) => ({
 			id: each.id,
 			citable: citable(each),
 			year: yearOf(each),

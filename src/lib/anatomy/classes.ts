@@ -13,7 +13,10 @@ export interface ClassLabels {
 	ahmed: string;
 }
 
-/** A root as it is written in a tooth's code. */
+/**
+ * A root as it is written in a tooth's code.
+ * @public
+ */
 export interface CodedRoot {
 	/** Short name of the root, for example `MB`; not printed for a tooth with one root. */
 	label: string;
@@ -78,6 +81,7 @@ export function classLabels(sequence: string): ClassLabels {
  * @param roots every root of the tooth, in the order to print; at least one
  * @throws RangeError without a tooth number or a root, or with an unnamed root of several
  * @throws SequenceError when a root's text is no canal sequence
+ * @public the room's face: the third way a whole tooth is written
  */
 export function ahmedCode(toothNumber: string, roots: readonly CodedRoot[]): string {
 	if (toothNumber.trim() === '') throw new RangeError('The code of a tooth needs a tooth number.');

@@ -12,7 +12,7 @@ export interface RootReading {
 }
 
 /** Something that is not a root: the teeth it is recorded in, the most telling first. */
-export interface FeatureWord {
+interface FeatureWord {
 	teeth: readonly ToothId[];
 	why: string;
 }

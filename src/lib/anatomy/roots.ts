@@ -7,7 +7,7 @@
 export type RootId = 'whole' | 'single' | 'B' | 'P' | 'L' | 'MB' | 'DB' | 'M' | 'D' | 'DL';
 
 /** A canal by its position. */
-export interface Canal {
+interface Canal {
 	/** Short name for labels and for naming the pair tested, for example `MB2` or `MM`. */
 	id: string;
 	/** Name in words, for example `middle mesial canal`. */

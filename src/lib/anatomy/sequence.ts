@@ -42,7 +42,10 @@ export interface LeafFacts {
 	stepsDown: boolean;
 }
 
-/** A text is not a canal sequence; the message is a plain sentence that says what to write instead. */
+/**
+ * A text is not a canal sequence; the message is a plain sentence that says what to write instead.
+ * @public for callers that show the sentence
+ */
 export class SequenceError extends Error {
 	override readonly name = 'SequenceError';
 }

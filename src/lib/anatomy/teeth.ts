@@ -9,7 +9,7 @@ import {
 } from './roots';
 import type { Root, RootId } from './roots';
 
-export type { Canal, Root, RootId } from './roots';
+export type { Root, RootId } from './roots';
 
 export type Arch = 'maxillary' | 'mandibular';
 export type ToothKind = 'incisor' | 'canine' | 'premolar' | 'molar';
@@ -28,7 +28,7 @@ type ToothSlug =
 export type ToothId = `${Arch}-${ToothSlug}`;
 
 /** How often a form of the roots is met (common practice, no source; the figures are in the table). */
-export interface RootForm {
+interface RootForm {
 	/** Letters of the roots that stand apart; one root is written `single`. */
 	roots: readonly string[];
 	frequency: 'usual' | 'common' | 'rare';

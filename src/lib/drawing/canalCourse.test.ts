@@ -3,7 +3,7 @@ import { LEAVES, describeSequence } from '$lib/anatomy/sequence';
 import { parse } from 'csv-parse/sync';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { APICAL_THIRD, courseOf, runsPath, sampleRun } from './canalCourse';
+import { courseOf, runsPath, sampleRun } from './canalCourse';
 import { halfWidthAt, type RootFrame } from './rootShape';
 
 const FRAME: RootFrame = { centre: 160, halfWidth: 115, yOf: (h) => 470 - 424 * h };
@@ -181,10 +181,10 @@ describe('courseOf', () => {
 
 	it.each([null, 0, 1, 1.4, -0.2])('takes a level of %s as not published: apical third, dashed', (level) => {
 		const course = courseOf('2-1', level);
-		expect(course.meetings).toEqual([{ height: APICAL_THIRD, lateral: 0, last: true }]);
+		expect(course.meetings).toEqual([{ height: 1 / 3, lateral: 0, last: true }]);
 		const dashed = course.runs.filter((run) => run.unpublished);
 		expect(dashed).toHaveLength(2);
-		for (const run of dashed) expect(run.points[run.points.length - 1].height).toBe(APICAL_THIRD);
+		for (const run of dashed) expect(run.points[run.points.length - 1].height).toBe(1 / 3);
 	});
 
 	it('spaces the steps evenly above the last meeting', () => {
@@ -194,7 +194,7 @@ describe('courseOf', () => {
 	});
 
 	it('draws the half way to an unpublished level on the very curve of the whole', () => {
-		const whole = samplePath(runsPath(FRAME, courseOf('2-1', APICAL_THIRD).runs));
+		const whole = samplePath(runsPath(FRAME, courseOf('2-1', 1 / 3).runs));
 		const parts = courseOf('2-1', null).runs;
 		for (const kind of [true, false]) {
 			const drawn = samplePath(

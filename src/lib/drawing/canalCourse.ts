@@ -33,7 +33,7 @@ interface Step {
 }
 
 /** A meeting without a published level is drawn where the apical third begins. */
-export const APICAL_THIRD = 1 / 3;
+const APICAL_THIRD = 1 / 3;
 /** Bends longer than this part of the root would look like curved roots. */
 const LONGEST_BEND = 0.5;
 /** Part of the gap between two steps that a bend may take, alone or beside another bend. */

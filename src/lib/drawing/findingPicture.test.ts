@@ -1,12 +1,13 @@
 import { describe, expect, it } from 'vitest';
-import { PICTURED_FINDINGS, layoutFindingPicture } from './findingPicture';
+import { TESTS } from '$lib/schemas/terms';
+import { layoutFindingPicture } from './findingPicture';
 import { evenTrack } from './instruments';
 import { layoutRiverMark } from './riverMark';
 
 const coordinates = (path: string) => [...path.matchAll(/[ML](-?[\d.]+),(-?[\d.]+)/g)];
 
 describe('layoutFindingPicture', () => {
-	it.each(PICTURED_FINDINGS)('draws %s inside its picture, with the meeting marked', (finding) => {
+	it.each(TESTS)('draws %s inside its picture, with the meeting marked', (finding) => {
 		const layout = layoutFindingPicture(finding);
 		expect(layout.meetings).toHaveLength(1);
 		for (const { path } of layout.shapes) {

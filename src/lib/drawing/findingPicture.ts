@@ -5,15 +5,8 @@ import { layoutMeetingMark, type MeetingMark } from './meetingMark';
 import { outlinePath, place, type RootFrame, type RootPoint } from './rootShape';
 
 /** Findings that speak for or against a confluence; the ids of the interface. */
-export const PICTURED_FINDINGS = [
-	'cone-mark',
-	'draw',
-	'file-contact',
-	'two-files',
-	'angled-radiograph',
-	'cbct-reading'
-] as const;
-export type PicturedFinding = (typeof PICTURED_FINDINGS)[number];
+export type PicturedFinding =
+	'cone-mark' | 'draw' | 'file-contact' | 'two-files' | 'angled-radiograph' | 'cbct-reading';
 
 /** What a shape of a picture stands for; the component gives each its colour. */
 export type PictureTone =

@@ -1,24 +1,9 @@
 import { z } from 'zod';
-
-/** Methods of the evidence files, in the order screens offer them. */
-export const METHODS = [
-	'micro-ct',
-	'clearing',
-	'sectioning',
-	'cbct',
-	'microscope',
-	'clinical',
-	'mixed',
-	'radiograph',
-	'review'
-] as const;
-
-/** Methods an estimate can be narrowed to: everything but published reviews, which are never pooled. */
-export const POOLED_METHODS = METHODS.filter((method) => method !== 'review');
+import { POOLED_METHODS } from './terms';
 
 export const probabilitySchema = z.number().min(0).max(1).describe('A probability, 0 to 1, unrounded');
 
-export const intervalSchema = z
+const intervalSchema = z
 	.tuple([probabilitySchema, probabilitySchema])
 	.describe('[lower, upper], 95 % unless a level was asked for');
 
@@ -32,17 +17,22 @@ export const tauSchema = z
 
 export const estimateSchema = z.object({ mean: probabilitySchema, interval: intervalSchema });
 
-const year = z.coerce
-	.number('Give a year, such as 1998.')
-	.int('Give a year, such as 1998.')
-	.min(1900, 'Give a year from 1900.')
-	.max(2100, 'Give a year up to 2100.');
+const YEAR_MESSAGE = 'Give a year, such as 1998.';
+const TOTAL_MESSAGE = 'Give a whole number, at least 1.';
 
-const total = z.coerce
-	.number('Give a whole number, at least 1.')
-	.int('Give a whole number, at least 1.')
-	.min(1, 'Give a whole number, at least 1.')
-	.max(10_000_000, 'Give a number up to 10,000,000.');
+// A body writes numbers as numbers, an address as text.
+const year = <Schema extends z._ZodNumber>(number: Schema) =>
+	number
+		.int(YEAR_MESSAGE)
+		.min(1900, 'Give a year from 1900.')
+		.max(2100, 'Give a year up to 2100.')
+		.optional();
+const total = <Schema extends z._ZodNumber>(number: Schema) =>
+	number
+		.int(TOTAL_MESSAGE)
+		.min(1, TOTAL_MESSAGE)
+		.max(10_000_000, 'Give a number up to 10,000,000.')
+		.optional();
 
 const methodSchema = z.enum(POOLED_METHODS, `The method must be one of ${POOLED_METHODS.join(', ')}.`);
 const countrySchema = z
@@ -59,9 +49,9 @@ export const filtersSchema = z
 	.strictObject({
 		methods: z.array(methodSchema).max(20).optional(),
 		countries: z.array(countrySchema).max(100).optional(),
-		yearFrom: year.optional(),
-		yearTo: year.optional(),
-		minTotal: total.optional(),
+		yearFrom: year(z.number(YEAR_MESSAGE)),
+		yearTo: year(z.number(YEAR_MESSAGE)),
+		minTotal: total(z.number(TOTAL_MESSAGE)),
 		exclude: z.array(sourceIdSchema).max(500).optional()
 	})
 	.refine(yearsInOrder, YEARS_MESSAGE)
@@ -72,9 +62,9 @@ export const filtersQuerySchema = z
 	.strictObject({
 		method: z.array(methodSchema).max(20).optional(),
 		country: z.array(countrySchema).max(100).optional(),
-		yearFrom: year.optional(),
-		yearTo: year.optional(),
-		minTotal: total.optional(),
+		yearFrom: year(z.coerce.number(YEAR_MESSAGE)),
+		yearTo: year(z.coerce.number(YEAR_MESSAGE)),
+		minTotal: total(z.coerce.number(TOTAL_MESSAGE)),
 		exclude: z.array(sourceIdSchema).max(500).optional()
 	})
 	.refine(yearsInOrder, YEARS_MESSAGE);

@@ -1,19 +1,7 @@
 import { z } from 'zod';
 import { estimateSchema, filtersSchema, probabilitySchema } from './common';
 import { fatesSchema } from './expectation';
-
-/** The tests that can tell whether two canals join, in the order answers list them. */
-export const TESTS = [
-	'cone-mark',
-	'draw',
-	'file-contact',
-	'two-files',
-	'angled-radiograph',
-	'cbct-reading'
-] as const;
-export const RESULTS = ['positive', 'negative', 'unclear'] as const;
-/** How a root was searched for further canals. */
-export const SEARCHES = ['unaided', 'loupes', 'microscope', 'microscope-troughing', 'cbct'] as const;
+import { RESULTS, SEARCHES, TESTS } from './terms';
 
 const count = (name: string) =>
 	z
@@ -21,7 +9,7 @@ const count = (name: string) =>
 		.int(`Give the number of ${name} as a whole number.`)
 		.min(1, `Give at least one for the ${name}.`);
 
-export const findingSchema = z.strictObject({
+const findingSchema = z.strictObject({
 	test: z.enum(TESTS, `The test must be one of ${TESTS.join(', ')}.`),
 	result: z.enum(RESULTS, `The result must be one of ${RESULTS.join(', ')}.`),
 	pair: z

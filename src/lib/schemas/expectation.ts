@@ -1,11 +1,12 @@
 import { z } from 'zod';
 import { estimateSchema, filtersSchema, probabilitySchema, summarySchema, tauSchema } from './common';
+import { methodChoiceSchema, rootCoverageSchema } from './coverage';
 import { featureSchema, studySchema } from './teeth';
 
 const observedSchema = z.object({ min: probabilitySchema, max: probabilitySchema }).nullable();
 
 /** One canal sequence of a root with its probability in a new population. */
-export const sequenceSchema = estimateSchema.extend({
+const sequenceSchema = estimateSchema.extend({
 	sequence: z.string(),
 	labels: z.object({
 		vertucci: z.string().nullable(),
@@ -20,7 +21,23 @@ export const sequenceSchema = estimateSchema.extend({
 		.describe('Range over the samples that name this sequence; null if none does')
 });
 
-export const questionSchema = z.object({
+const questionMethodSchema = methodChoiceSchema.extend({
+	offsets: z
+		.array(
+			z.object({
+				group: z.enum(['laboratory', 'clinical', 'radiograph']),
+				mean: z.number(),
+				interval: z.tuple([z.number(), z.number()]),
+				studies: z.number().int()
+			})
+		)
+		.describe(
+			'How far each group of methods differs from CBCT, logit scale, if the method model is shown: laboratory is ' +
+				'micro-CT, clearing and sectioning; clinical is clinical and microscope'
+		)
+});
+
+const questionSchema = z.object({
 	id: z.string(),
 	text: z.string(),
 	borrowed: z.boolean().describe('No sample of this root answers: the figures are the other roots’'),
@@ -28,7 +45,8 @@ export const questionSchema = z.object({
 	pooled: summarySchema.describe('The middle population'),
 	predictive: summarySchema.describe('A new population, from which the next patient comes'),
 	tau: tauSchema,
-	observed: observedSchema
+	observed: observedSchema,
+	method: questionMethodSchema
 });
 export type QuestionDto = z.infer<typeof questionSchema>;
 
@@ -59,8 +77,8 @@ export const expectationSchema = z.object({
 		z.object({ source: z.string(), entry: z.number().int(), question: z.string(), percent: z.number() })
 	),
 	notPooled: z.array(z.object({ source: z.string(), entry: z.number().int(), reason: z.string() })),
-	coverage: z
-		.object({ level95: probabilitySchema, level80: probabilitySchema, samples: z.number().int() })
+	coverage: rootCoverageSchema
 		.nullable()
+		.describe('Null while it is being worked out; the next request a moment later has it')
 });
 export type ExpectationDto = z.infer<typeof expectationSchema>;

@@ -1,7 +1,7 @@
 import { z } from 'zod';
-import { METHODS } from './common';
+import { METHODS } from './terms';
 
-export const MEASURES = [
+const MEASURES = [
 	'configuration',
 	'canal-count',
 	'root-count',
@@ -11,8 +11,8 @@ export const MEASURES = [
 	'extra-canal-confluence'
 ] as const;
 
-export const ENTRY_SORTS = ['id', 'source', 'tooth', 'year', 'total'] as const;
-export const DEFAULT_LIMIT = 50;
+const ENTRY_SORTS = ['id', 'source', 'tooth', 'year', 'total'] as const;
+const DEFAULT_LIMIT = 50;
 
 const limit = z.coerce
 	.number('Give a number from 1 to 200.')
@@ -39,7 +39,7 @@ export const entriesQuerySchema = z.strictObject({
 });
 export type EntriesQuery = z.infer<typeof entriesQuerySchema>;
 
-export const figureSchema = z.object({
+const figureSchema = z.object({
 	category: z.string(),
 	count: z.number().int().nullable(),
 	percent: z.number().nullable(),
@@ -47,7 +47,7 @@ export const figureSchema = z.object({
 	note: z.string()
 });
 
-export const entrySchema = z.object({
+const entrySchema = z.object({
 	id: z.number().int(),
 	source: z.string(),
 	title: z.string().nullable(),
@@ -74,7 +74,7 @@ export const entriesSchema = z.object({
 	nextCursor: z.string().nullable()
 });
 
-export const revisionSchema = z.object({
+const revisionSchema = z.object({
 	number: z.number().int(),
 	at: z.iso.datetime(),
 	who: z.string(),
@@ -91,7 +91,7 @@ export const sourcesQuerySchema = z.strictObject({
 	limit
 });
 
-export const sourceSummarySchema = z.object({
+const sourceSummarySchema = z.object({
 	id: z.string(),
 	title: z.string().nullable(),
 	authors: z.string().describe('Family names; empty when none was seen'),

@@ -11,7 +11,7 @@ const rootSummarySchema = z.object({
 });
 
 /** A tooth in the list of teeth. */
-export const toothSummarySchema = z.object({
+const toothSummarySchema = z.object({
 	id: z.string(),
 	name: z.string(),
 	iso: z.array(z.string()).describe('ISO 3950, right and left'),
@@ -58,7 +58,7 @@ const countSampleSchema = z.object({
 });
 
 /** A published mean, with its place. */
-export const measurementSchema = z.object({
+const measurementSchema = z.object({
 	source: z.string(),
 	locator: z.string(),
 	tooth: z.string(),

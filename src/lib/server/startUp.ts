@@ -1,6 +1,6 @@
 import { environment } from './config';
 import { closeDatabase, database } from './db';
-import { stopEstimator } from './inference/estimator';
+import { estimator, stopEstimator } from './inference/estimator';
 import { log } from './log';
 import { readLiteratureFiles } from './table/literatureFiles';
 import { seedLiterature } from './table/seed';
@@ -17,9 +17,17 @@ export async function startUp(): Promise<void> {
 		log.warn({ rows: report.unplaced }, 'rows of the literature could not be placed: see /table/not-placed');
 	if (held.watersmeetStops) return;
 	held.watersmeetStops = true;
-	process.once('sveltekit:shutdown' as 'exit', async () => {
-		await stopEstimator();
-		await closeDatabase();
-		log.info('stopped');
-	});
+	process.once('sveltekit:shutdown' as 'exit', () => void shutDown());
+	// Nobody waits for this: it starts the worker, so that the first visitor does not pay for it, and has the table's coverage ready.
+	estimator()
+		.then((current) => current.tableCoverage())
+		.catch((error: unknown) =>
+			log.error({ err: error }, 'the coverage of the table could not be worked out')
+		);
+}
+
+async function shutDown(): Promise<void> {
+	await stopEstimator();
+	await closeDatabase();
+	log.info('stopped');
 }

@@ -1,5 +1,5 @@
 import type { Fate } from '$lib/anatomy/sequence';
-import type { RESULTS, SEARCHES, TESTS } from '$lib/schemas/confluence';
+import type { RESULTS, SEARCHES, TESTS } from '$lib/schemas/terms';
 
 type Test = (typeof TESTS)[number];
 type Result = (typeof RESULTS)[number];

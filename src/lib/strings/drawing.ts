@@ -61,6 +61,12 @@ export const drawing = {
 			'Square: a study, larger with more roots; line: its 95 % interval (Wilson). Diamond: pooled. Band: where a new population is expected, 95 %.',
 		empty: 'No study answers this question for this root.'
 	},
+	coverage: {
+		samples: 'samples left out in turn (logarithmic)',
+		expected: (level: string) =>
+			`Solid line: ${level}, what the ranges claim. Each dot is one question of one root.`,
+		flag: (from: string) => `Dashed line: ${from}; questions under it are drawn as diamonds and named below.`
+	},
 	interval: {
 		text: (label: string, mean: number, interval: readonly [number, number]) =>
 			`${label}: ${percent(mean)}, 95 % interval ${range(interval)}`

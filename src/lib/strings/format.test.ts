@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { count, inWords, mm, percent, range } from './format';
+import { count, diameter, inWords, mm, mmRange, pValue, percent, range } from './format';
 
 /** Numbers and units are held together by a no-break space; the checks read better with a plain one. */
 const plain = (text: string) => text.replaceAll('\u00a0', ' ');
@@ -72,6 +72,11 @@ describe('mm and count', () => {
 	it('round without false precision', () => {
 		expect(plain(mm(3.7421))).toBe('3.7 mm');
 		expect(plain(mm(13))).toBe('13 mm');
+		expect(plain(mmRange([2.02, 3.98]))).toBe('2 to 4 mm');
+		expect(plain(mmRange([2.98, 3.02]))).toBe('3 mm');
+		expect(plain(diameter(0.3935))).toBe('0.39 mm');
+		expect(plain(diameter(0.4))).toBe('0.40 mm');
+		expect([0.0364, 0.9, 0.00001].map(pValue)).toEqual(['0.036', '0.90', 'under 0.001']);
 		expect(count(6253)).toBe('6,253');
 		expect(count(0)).toBe('0');
 	});

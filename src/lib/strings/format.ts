@@ -9,6 +9,8 @@ const NO_BREAK = '\u00a0';
 
 const whole = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 0 });
 const tenths = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 1 });
+const hundredths = new Intl.NumberFormat(LOCALE, { minimumFractionDigits: 2, maximumFractionDigits: 2 });
+const thousandths = new Intl.NumberFormat(LOCALE, { minimumFractionDigits: 3, maximumFractionDigits: 3 });
 
 /** Rare probabilities are said as 1 in one of these. */
 const RARE_DENOMINATORS = [10, 15, 20, 30, 50, 100];
@@ -66,6 +68,30 @@ export function inWords(probability: number): string {
  */
 export function mm(length: number): string {
 	return `${tenths.format(length)}${NO_BREAK}mm`;
+}
+
+/**
+ * A range of lengths: `2.1 to 3.9 mm`; one figure where both ends read alike.
+ *
+ * @param interval lower and upper end, mm
+ */
+export function mmRange(interval: readonly [number, number]): string {
+	const [lower, upper] = [mm(interval[0]), mm(interval[1])];
+	return lower === upper ? lower : `${tenths.format(interval[0])} to ${upper}`;
+}
+
+/**
+ * The diameter of an instrument or a canal to one hundredth: `0.43 mm`.
+ *
+ * @param width mm
+ */
+export function diameter(width: number): string {
+	return `${hundredths.format(width)}${NO_BREAK}mm`;
+}
+
+/** A p-value: `0.036`; `under 0.001` below that. */
+export function pValue(p: number): string {
+	return p < 0.001 ? 'under 0.001' : p < 0.1 ? thousandths.format(p) : hundredths.format(p);
 }
 
 /** A count with its thousands set apart: `1,234`. */

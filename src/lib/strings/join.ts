@@ -75,5 +75,5 @@ export const join = {
 	openEvidence: 'Open the samples',
 	revision: (number: number) => `Table revision ${number}.`,
 	errorTitle: 'This cannot be answered yet',
-	wholeError: 'The values in this address cannot be answered.'
+	wholeError: 'Something is missing or does not fit together: see the field marked beside it.'
 };

@@ -41,6 +41,24 @@ export const root = {
 	questionsNote:
 		'The distribution above is made of nine yes/no questions. Each is pooled over the samples that answer it; open one to see them. “A new population” is where the next patient comes from, so its range is the honest one.',
 	borrowed: 'borrowed from other roots: no sample here',
+	byMethod: 'shown by method: the figures are those of CBCT',
+	offsetsTitle: 'Offsets against CBCT (logit scale)',
+	groups: {
+		laboratory: 'micro-CT, clearing, sectioning',
+		clinical: 'clinic, microscope',
+		radiograph: 'radiograph'
+	} as Record<string, string>,
+	offset: (group: string, mean: string, from: string, to: string, studies: number) =>
+		`${group}: ${mean} (${from} to ${to}), ${studies} ${studies === 1 ? 'sample' : 'samples'}`,
+	scores: (plain: string, method: string) =>
+		`Log score of left-out samples (nearer to 0 is better): ${plain} plain, ${method} by method`,
+	coverage: (samples: number, inside95: string, inside80: string) =>
+		`Of ${samples} samples left out in turn, ${inside95} fell into their 95 % range and ${inside80} into their 80 % range`,
+	coverageFlag: 'This question covers too little: do not lean on its range.',
+	coverageTitle: 'How far to trust these ranges',
+	coveragePending: 'Being worked out: load the page again in a moment.',
+	coverageNone: 'No question of this root has three samples, so none can be left out and predicted.',
+	coverageMore: 'How this is measured',
 	samples: (number: number) => `${number} ${number === 1 ? 'sample' : 'samples'}`,
 	middle: 'Middle population',
 	spread: (tau: string) => `Spread between populations (tau, logit scale): ${tau}`,
@@ -65,6 +83,7 @@ export const root = {
 		years: 'Published from',
 		yearTo: 'up to',
 		minTotal: 'At least so many roots or teeth',
+		exclude: 'Sources to leave out',
 		apply: 'Narrow',
 		clear: 'Take all samples',
 		active: 'Only some samples are taken: the figures below are for these.',

@@ -6,11 +6,13 @@ export const site = {
 	nav: {
 		label: 'Main',
 		teeth: 'Find a tooth',
+		how: 'How it works',
 		about: 'What this is and is not'
 	},
 	search: {
 		label: 'Look up a tooth, root or feature',
 		placeholder: '16, #14, UL6, upper first molar, mb2',
+		placeholderShort: '16, UL6, mb2',
 		button: 'Look up',
 		shortcut: 'Press / to look up'
 	},
@@ -27,7 +29,7 @@ export const site = {
 		caution:
 			'A probability from published samples is not a finding in this patient. Image when in doubt, follow local imaging and treatment guidance, and treat under your own licence.',
 		identity: 'No patient identity belongs in this product.',
-		api: 'OpenAPI description',
+		api: 'The HTTP API',
 		notPlaced: 'Rows that could not be placed'
 	},
 	error: {

@@ -1,4 +1,4 @@
-import { redirect, type RequestHandler } from '@sveltejs/kit';
+import { error, redirect, type RequestHandler } from '@sveltejs/kit';
 import { preferencesSchema } from '$lib/schemas/preferences';
 import { PREFERENCES_COOKIE } from '$lib/server/hooks/preferences';
 
@@ -6,14 +6,16 @@ const KEPT_SECONDS = 365 * 24 * 60 * 60;
 
 /** Keeps a visitor's preferences in a cookie and goes back to the page they came from. */
 export const POST: RequestHandler = async ({ request, cookies, url }) => {
-	const form = await request.formData();
+	const form = await request.formData().catch(() => error(400, 'This is not the form of the preferences.'));
 	const chosen = preferencesSchema.safeParse({ theme: form.get('theme'), numbers: form.get('numbers') });
 	if (chosen.success) {
 		cookies.set(PREFERENCES_COOKIE, JSON.stringify(chosen.data), {
 			path: '/',
 			maxAge: KEPT_SECONDS,
 			httpOnly: true,
-			sameSite: 'lax'
+			sameSite: 'lax',
+			// Kit's default would have browsers drop the cookie on a clinic's own network without https.
+			secure: url.protocol === 'https:'
 		});
 	}
 	redirect(303, ownAddress(form.get('back'), url.origin));
@@ -23,5 +25,7 @@ export const POST: RequestHandler = async ({ request, cookies, url }) => {
 function ownAddress(back: FormDataEntryValue | null, origin: string): string {
 	if (typeof back !== 'string' || !URL.canParse(back, origin)) return '/';
 	const target = new URL(back, origin);
-	return target.origin === origin ? target.pathname + target.search : '/';
+	// A path with two slashes at its start would be read as the address of another site.
+	const own = target.origin === origin && !target.pathname.startsWith('//');
+	return own ? target.pathname + target.search : '/';
 }

@@ -1,4 +1,4 @@
-import { PICTURED_FINDINGS } from '$lib/drawing/findingPicture';
+import { TESTS } from '$lib/schemas/terms';
 import { drawing } from '$lib/strings/drawing';
 import { render } from 'svelte/server';
 import { describe, expect, it } from 'vitest';
@@ -6,7 +6,7 @@ import FindingPicture from './FindingPicture.svelte';
 import SequenceGlyph from './SequenceGlyph.svelte';
 
 describe('FindingPicture', () => {
-	it.each(PICTURED_FINDINGS)('draws %s with a text alternative', (finding) => {
+	it.each(TESTS)('draws %s with a text alternative', (finding) => {
 		const { body } = render(FindingPicture, { props: { finding } });
 		expect(body).toContain(`role="img" aria-label="${drawing.findings[finding]}"`);
 		expect(body).not.toMatch(/ style=|undefined|NaN/);

@@ -1,4 +1,6 @@
-import { RESULTS, TESTS } from '$lib/schemas/confluence';
+import { TESTS, type RESULTS } from '$lib/schemas/terms';
+import { readFilterFields, type FilterFields } from '$lib/filterQuery';
+import { levelFields, readLevel, type LevelState } from './levelState';
 
 /** The question of the page as its address writes it. Values are as typed: the schema says what is wrong with them. */
 export interface JoinState {
@@ -11,6 +13,10 @@ export interface JoinState {
 	threshold?: number;
 	/** In the order of the address, which is the order they were made in. */
 	findings: { test: string; result: string; pair?: string }[];
+	/** What was typed of the level of the confluence. */
+	level: LevelState;
+	/** Filters of the samples, as typed. */
+	filters: FilterFields;
 }
 
 type Test = (typeof TESTS)[number];
@@ -30,7 +36,12 @@ export function readState(query: URLSearchParams): JoinState {
 		const pair = text(`${name}-pair`);
 		findings.push({ test: name, result: value, ...(pair && { pair }) });
 	}
-	const state: JoinState = { asked: text('canals') !== undefined, findings };
+	const state: JoinState = {
+		asked: text('canals') !== undefined,
+		findings,
+		level: readLevel(query),
+		filters: readFilterFields(query)
+	};
 	const optional = {
 		canals: number('canals'),
 		orifices: number('orifices'),
@@ -44,17 +55,26 @@ export function readState(query: URLSearchParams): JoinState {
 	);
 }
 
-/** Writes a state as the query of an address; `readState` of it gives the state back. */
-export function writeState(state: JoinState): string {
-	const query = new URLSearchParams();
+/** The question without the level, as names and values of an address, findings in their order. */
+export function questionFields(state: JoinState): [string, string][] {
+	const fields: [string, string][] = [];
 	for (const name of ['canals', 'orifices', 'rootsSeen', 'search', 'threshold'] as const) {
-		if (state[name] !== undefined) query.set(name, String(state[name]));
+		if (state[name] !== undefined) fields.push([name, String(state[name])]);
 	}
 	for (const { test, result, pair } of state.findings) {
-		query.append(test, result);
-		if (pair) query.set(`${test}-pair`, pair);
+		fields.push([test, result]);
+		if (pair) fields.push([`${test}-pair`, pair]);
 	}
-	return query.toString();
+	return fields;
+}
+
+/** Writes a state as the query of an address; `readState` of it gives the state back. */
+export function writeState(state: JoinState): string {
+	return new URLSearchParams([
+		...questionFields(state),
+		...levelFields(state.level),
+		...state.filters
+	]).toString();
 }
 
 /** The state with one finding set, changed in place of an earlier one, or taken out (`result` empty). */

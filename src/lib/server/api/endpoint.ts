@@ -9,9 +9,7 @@ const BODY_LIMIT_BYTES = 256 * 1024;
  * Wraps an endpoint: what it returns is sent as JSON (a Response passes as it is), a thrown Problem becomes a problem document.
  * Anything else thrown is a defect and goes on to kit's error handling.
  */
-export function endpoint<Event extends RequestEvent>(
-	handle: (event: Event) => Promise<unknown> | unknown
-): RequestHandler {
+export function endpoint<Event extends RequestEvent>(handle: (event: Event) => unknown): RequestHandler {
 	return async (event) => {
 		try {
 			const result = await handle(event as Event);
@@ -24,7 +22,7 @@ export function endpoint<Event extends RequestEvent>(
 }
 
 /** Zod's issues as field errors. */
-export function fieldErrors(error: z.ZodError): FieldError[] {
+function fieldErrors(error: z.ZodError): FieldError[] {
 	return error.issues.flatMap((issue) => {
 		const path = issue.path.map(String);
 		// An unknown key's issue stands at its parent; the caller wants to know which key.
@@ -75,13 +73,13 @@ export function validate<Schema extends z.ZodType>(schema: Schema, value: unknow
  * @throws Problem 422 naming each field
  */
 export function readQuery<Schema extends z.ZodType>(
-	url: URL,
+	query: URLSearchParams,
 	schema: Schema,
 	lists: readonly string[] = []
 ): z.infer<Schema> {
 	const values: Record<string, string | string[]> = {};
-	for (const name of new Set(url.searchParams.keys())) {
-		const all = url.searchParams.getAll(name);
+	for (const name of new Set(query.keys())) {
+		const all = query.getAll(name);
 		values[name] = all.length > 1 || lists.includes(name) ? all : all[0];
 	}
 	return validate(schema, values);

@@ -44,6 +44,47 @@ export function openApiDocument(origin: string): Json {
 	};
 }
 
+/** The operations as the page about the API shows them, each with an example that works on the shipped table. */
+export function describeOperations() {
+	return operations.map((operation) => {
+		const { id, method, path, summary, body, response, failures } = operation;
+		const schema = (of: z.ZodType, io: 'input' | 'output') => JSON.stringify(jsonSchema(of, io), null, 2);
+		return {
+			id,
+			method,
+			path,
+			summary,
+			parameters: [...pathParameters(operation), ...queryParameters(operation.query)].map((parameter) => ({
+				name: String(parameter.name),
+				in: String(parameter.in),
+				required: parameter.required === true,
+				...(typeof parameter.description === 'string' && { description: parameter.description })
+			})),
+			failures: [...failures, 429].map((status) => ({
+				status: String(status),
+				description: REASONS[status]
+			})),
+			requestSchema: body ? schema(body, 'input') : null,
+			answerSchema: schema(response, 'output'),
+			example: {
+				address: `/api/v1${exampleAddress(operation)}`,
+				body: operation.example === undefined ? null : JSON.stringify(operation.example, null, 2)
+			}
+		};
+	});
+}
+
+function exampleAddress(operation: Operation): string {
+	return operation.path.replace(/\{(\w+)\}/g, (_, name: string) =>
+		encodeURIComponent(exampleOf(operation, name))
+	);
+}
+
+/** A value of the path that works on the shipped table. */
+function exampleOf({ exampleParameters = {} }: Operation, name: string): string {
+	return String(exampleParameters[name] ?? PATH_PARAMETERS[name].example);
+}
+
 function describe(operation: Operation): Json {
 	const failures = Object.fromEntries(
 		[...operation.failures, 429].map((status) => [
@@ -60,7 +101,7 @@ function describe(operation: Operation): Json {
 	return {
 		operationId: operation.id,
 		summary: operation.summary,
-		parameters: [...pathParameters(operation.path), ...queryParameters(operation.query)],
+		parameters: [...pathParameters(operation), ...queryParameters(operation.query)],
 		...(operation.body && {
 			requestBody: {
 				required: true,
@@ -74,17 +115,10 @@ function describe(operation: Operation): Json {
 	};
 }
 
-function pathParameters(path: string): Json[] {
-	return [...path.matchAll(/\{(\w+)\}/g)].map(([, name]) => {
-		const { description, example, ...schema } = PATH_PARAMETERS[name];
-		return {
-			name,
-			in: 'path',
-			required: true,
-			description,
-			...(example !== undefined && { example }),
-			schema
-		};
+function pathParameters(operation: Operation): Json[] {
+	return [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => {
+		const { description, example: _, ...schema } = PATH_PARAMETERS[name];
+		return { name, in: 'path', required: true, description, example: exampleOf(operation, name), schema };
 	});
 }
 

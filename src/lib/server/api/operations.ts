@@ -1,7 +1,9 @@
 import type { z } from 'zod';
 import { filtersQuerySchema } from '$lib/schemas/common';
 import { confluenceRequestSchema, confluenceResponseSchema } from '$lib/schemas/confluence';
+import { tableCoverageSchema } from '$lib/schemas/coverage';
 import { expectationSchema } from '$lib/schemas/expectation';
+import { levelRequestSchema, levelResponseSchema } from '$lib/schemas/level';
 import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
 import {
 	entriesQuerySchema,
@@ -24,6 +26,8 @@ export interface Operation {
 	body?: z.ZodType;
 	/** A request that works on the shipped table, shown as the example. */
 	example?: unknown;
+	/** Values of the path for the example; teeth and roots have theirs already. */
+	exampleParameters?: Record<string, string>;
 	response: z.ZodType;
 	/** Statuses other than 200 that the operation may answer with, besides 429. */
 	failures: number[];
@@ -60,6 +64,14 @@ export const operations: Operation[] = [
 	},
 	{
 		method: 'get',
+		path: '/coverage',
+		id: 'getCoverage',
+		summary: 'How well the table predicts samples that were left out of it, question by question',
+		response: tableCoverageSchema,
+		failures: []
+	},
+	{
+		method: 'get',
 		path: '/entries',
 		id: 'listEntries',
 		summary: 'Published entries of the table, filtered, sorted, in pages',
@@ -71,6 +83,7 @@ export const operations: Operation[] = [
 		method: 'get',
 		path: '/entries/{id}',
 		id: 'getEntry',
+		exampleParameters: { id: '1' },
 		summary: 'One entry with its revisions',
 		response: entryWithRevisionsSchema,
 		failures: [404]
@@ -88,6 +101,7 @@ export const operations: Operation[] = [
 		method: 'get',
 		path: '/sources/{id}',
 		id: 'getSource',
+		exampleParameters: { id: 'weine-1969' },
 		summary: 'One source with its CSL-JSON',
 		response: sourceSchema,
 		failures: [404]
@@ -121,6 +135,26 @@ export const operations: Operation[] = [
 			findings: [{ test: 'cone-mark', result: 'positive' }]
 		},
 		response: confluenceResponseSchema,
+		failures: [400, 404, 413, 415, 422]
+	},
+	{
+		method: 'post',
+		path: '/confluence-level',
+		id: 'confluenceLevel',
+		summary: 'Where two canals join, and the length and cut of the second cone if they share one exit',
+		body: levelRequestSchema,
+		example: {
+			...slug,
+			workingLengths: { first: 20.5, second: 19.5 },
+			measurements: [
+				{ kind: 'cone-mark', value: 3, coneShortBy: 0 },
+				{ kind: 'cone-shortfall', value: 2.6 }
+			],
+			canal: { tip: 0.25, taper: 0.06 },
+			cone: { tip: 0.25, taper: 0.06 },
+			secondShapedTo: 'full'
+		},
+		response: levelResponseSchema,
 		failures: [400, 404, 413, 415, 422]
 	},
 	{

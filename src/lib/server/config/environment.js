@@ -6,7 +6,9 @@ import { z } from 'zod';
  * Every key has a default that suits one machine; README lists them.
  */
 const schema = z.object({
-	NODE_ENV: z.enum(['production', 'development', 'test'], 'must be production, development or test').default('production'),
+	NODE_ENV: z
+		.enum(['production', 'development', 'test'], 'must be production, development or test')
+		.default('production'),
 	HOST: z.string().min(1, 'must name an address to listen on, such as 0.0.0.0').default('0.0.0.0'),
 	PORT: z.coerce
 		.number('must be a whole number from 1 to 65535')
@@ -14,7 +16,9 @@ const schema = z.object({
 		.min(1, 'must be a whole number from 1 to 65535')
 		.max(65535, 'must be a whole number from 1 to 65535')
 		.default(3000),
-	ORIGIN: z.url({ protocol: /^https?$/, error: 'must be an address such as https://canals.example.org' }).optional(),
+	ORIGIN: z
+		.url({ protocol: /^https?$/, error: 'must be an address such as https://canals.example.org' })
+		.optional(),
 	DATA_DIR: z.string().min(1, 'must name a folder').default('data/runtime'),
 	LITERATURE_DIR: z.string().min(1, 'must name a folder').default('data/literature'),
 	BODY_SIZE_LIMIT: z
@@ -27,10 +31,17 @@ const schema = z.object({
 		.min(1, 'must be a whole number, at least 1')
 		.default(1200),
 	LOG_LEVEL: z
-		.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'], 'must be fatal, error, warn, info, debug, trace or silent')
+		.enum(
+			['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'],
+			'must be fatal, error, warn, info, debug, trace or silent'
+		)
 		.default('info'),
 	ADDRESS_HEADER: z.string().min(1, 'must name a header, such as x-forwarded-for').optional(),
-	SHUTDOWN_TIMEOUT: z.coerce.number('must be a number of seconds').int('must be a number of seconds').min(1, 'must be at least 1 second').default(30)
+	SHUTDOWN_TIMEOUT: z.coerce
+		.number('must be a number of seconds')
+		.int('must be a number of seconds')
+		.min(1, 'must be at least 1 second')
+		.default(30)
 });
 
 /** @typedef {z.infer<typeof schema> & { ORIGIN: string }} Environment */
@@ -42,7 +53,9 @@ const schema = z.object({
  * @returns {{ environment: Environment } | { mistakes: string[] }} one sentence for each mistake
  */
 export function readEnvironment(values, root = process.cwd()) {
-	const set = Object.fromEntries(Object.entries(values).filter(([, value]) => value !== undefined && value !== ''));
+	const set = Object.fromEntries(
+		Object.entries(values).filter(([, value]) => value !== undefined && value !== '')
+	);
 	const result = schema.safeParse(set);
 	if (!result.success) {
 		return { mistakes: result.error.issues.map((issue) => `${issue.path.join('.')} ${issue.message}.`) };

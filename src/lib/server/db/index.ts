@@ -6,7 +6,7 @@ import { defineLiterature } from './models/literature';
 import { defineSupplements } from './models/supplements';
 
 /** Name of the database file inside DATA_DIR. */
-export const DATABASE_FILE = 'watersmeet.sqlite';
+const DATABASE_FILE = 'watersmeet.sqlite';
 
 // Hot reload evaluates this module again; the connection must outlive that.
 const held = globalThis as typeof globalThis & { watersmeetDatabase?: Promise<Sequelize> };
@@ -14,6 +14,7 @@ const held = globalThis as typeof globalThis & { watersmeetDatabase?: Promise<Se
 /**
  * Migrates and opens the database of a data folder, with every model tied to it.
  * @param dataDir folder of the database file; made if it does not exist
+ * @public for tools that open a folder of their own
  */
 export async function connect(dataDir: string): Promise<Sequelize> {
 	const file = path.join(dataDir, DATABASE_FILE);

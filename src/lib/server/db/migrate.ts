@@ -1,4 +1,4 @@
-import { QueryTypes, Sequelize, type QueryInterface } from 'sequelize';
+import { QueryTypes, type QueryInterface, type Sequelize } from 'sequelize';
 import { SequelizeStorage, Umzug } from 'umzug';
 import { openDatabase } from './connection';
 

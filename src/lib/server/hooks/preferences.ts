@@ -14,7 +14,7 @@ export const preferences: Handle = async ({ event, resolve }) => {
 };
 
 /** Preferences from a cookie's text; whatever cannot be read counts as unset. */
-export function readPreferences(text: string | undefined): Preferences {
+function readPreferences(text: string | undefined): Preferences {
 	let value: unknown = {};
 	try {
 		value = JSON.parse(text ?? '{}');

@@ -13,7 +13,7 @@ const SMALLEST_SD = 1.5;
 const FEWEST = 2;
 
 /** All roots the product answers for. */
-const ANSWERED_ROOTS: readonly { tooth: string; root: string }[] = teeth.flatMap(({ id, roots }) =>
+export const ANSWERED_ROOTS: readonly { tooth: string; root: string }[] = teeth.flatMap(({ id, roots }) =>
 	roots.map((root) => ({ tooth: id, root }))
 );
 

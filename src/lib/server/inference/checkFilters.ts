@@ -22,7 +22,10 @@ export async function checkFilters(
 		const codes = new Set([...samples].flatMap((country) => country.split('+')));
 		for (const [index, code] of countries.entries())
 			if (!codes.has(code))
-				errors.push({ path: `${names.countries}.${index}`, message: `No sample of the table is from ${code}.` });
+				errors.push({
+					path: `${names.countries}.${index}`,
+					message: `No sample of the table is from ${code}.`
+				});
 	}
 	if (exclude?.length) {
 		const sources = await known('SELECT id AS name FROM source');

@@ -11,7 +11,7 @@ import { shippedRoot } from '../../../../tests/support/shippedRoots';
 import { characteristicsFor } from './characteristics';
 import { answerConfluence } from './confluence';
 import type { ConfluenceAnswer } from './confluence';
-import { SEARCHES, TESTS } from '$lib/schemas/confluence';
+import { SEARCHES, TESTS } from '$lib/schemas/terms';
 import type { ConfluenceQuestion, Finding, Test } from './confluenceQuestion';
 
 const rows = shippedCharacteristics();

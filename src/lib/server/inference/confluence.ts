@@ -104,7 +104,8 @@ export function answerConfluence(
 		throw new RangeError('No canal sequence of this root fits the question.');
 	}
 	const posterior = estimatorOf(model, leaves, priors, evidence);
-	const prior = inquiry.entered.length > 0 ? estimatorOf(model, leaves, priors, combine([], context)) : posterior;
+	const prior =
+		inquiry.entered.length > 0 ? estimatorOf(model, leaves, priors, combine([], context)) : posterior;
 	return {
 		prior: outlookOf(inquiry, prior),
 		posterior: pictureOf(inquiry, posterior),

@@ -1,11 +1,11 @@
-import type { RESULTS, SEARCHES, TESTS } from '$lib/schemas/confluence';
+import type { RESULTS, SEARCHES, TESTS } from '$lib/schemas/terms';
 import { LEAVES, leafFacts } from '$lib/anatomy/sequence';
 import type { Leaf } from '$lib/anatomy/sequence';
 
 export type Test = (typeof TESTS)[number];
 export type Result = (typeof RESULTS)[number];
 /** How the root was searched for further canals. */
-export type Search = (typeof SEARCHES)[number];
+type Search = (typeof SEARCHES)[number];
 
 /** One test of two canals and what it showed. */
 export interface Finding {

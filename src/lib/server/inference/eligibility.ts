@@ -4,8 +4,7 @@ import type { ScopeGrant } from './scope';
 import type { ObservationRow, SourceFacts } from './types';
 
 /** A row that may enter, with what its scope lets it answer; or the reason why it may not. */
-type Admission =
-	{ admitted: true; grant: Exclude<ScopeGrant, 'none'> } | { admitted: false; reason: string };
+type Admission = { admitted: true; grant: Exclude<ScopeGrant, 'none'> } | { admitted: false; reason: string };
 
 /** "highest of 44 countries", "lowest region": an extreme chosen by its result, so no sample of anything. */
 const EXTREME = /\b(?:lowest|highest)\b[^;.]*\b(?:countries|regions?|nations|populations)\b/i;

@@ -20,7 +20,12 @@ export type Estimator = (holds: (leaf: Leaf) => boolean) => Estimate;
  * @param leaves the possible leaves
  * @param priors E[theta] of each leaf
  */
-export function estimatorOf(model: RootModel, leaves: Leaf[], priors: LeafWeights, evidence: Evidence): Estimator {
+export function estimatorOf(
+	model: RootModel,
+	leaves: Leaf[],
+	priors: LeafWeights,
+	evidence: Evidence
+): Estimator {
 	const weights = exactWeights(leaves, priors, evidence);
 	const intervalOf = intervalsOf(model, evidence, leaves, statesOf(leaves, weights, evidence), LEVEL);
 	return (holds) => ({

@@ -5,8 +5,12 @@ import { Piscina } from 'piscina';
 import { Problem } from '../api/problem';
 import { serverDatabase } from '../db/server';
 import { readSnapshot, tableRevision, type TableSnapshot } from '../table/snapshot';
+import { ANSWERED_ROOTS } from './borrowing';
+import { canonical, remember } from './cache';
 import type { ConfluenceAnswer } from './confluence';
 import type { ConfluenceQuestion } from './confluenceQuestion';
+import { sumCoverage, type RootCoverage, type TableCoverage } from './coverage';
+import { OneByOne } from './oneByOne';
 import { createTasks, type RootAnswer, type Tasks, type ToothAnswer } from './tasks';
 import type { Filters, RootModel, Study } from './types';
 
@@ -16,6 +20,10 @@ const WORKER_FILE = 'build/entries/inferenceWorker.js';
 const MOST_WAITING = 500;
 /** Roots kept with their models: some 200 kB each. */
 const MOST_ROOTS = 300;
+/** Coverages kept: some 10 kB each. */
+const MOST_COVERAGES = 300;
+/** Coverages that may wait to be worked out for nobody in particular. */
+const MOST_IN_BACKGROUND = 50;
 const WORKER_IDLE_MS = 5 * 60 * 1000;
 const OLD_REVISION_GRACE_MS = 60 * 1000;
 
@@ -30,14 +38,21 @@ class Estimator {
 	// Promises, not results: a question asked twice at once is worked out once.
 	readonly #roots = new LRUCache<string, Promise<RootAnswer>>({ max: MOST_ROOTS });
 	readonly #teeth = new Map<string, Promise<ToothAnswer>>();
+	readonly #coverages = new LRUCache<string, Promise<RootCoverage>>({ max: MOST_COVERAGES });
+	readonly #knownCoverages = new LRUCache<string, RootCoverage>({ max: MOST_COVERAGES });
+	readonly #inBackground = new OneByOne(MOST_IN_BACKGROUND);
+	readonly #queuedCoverages = new Set<string>();
+	readonly #table = new Map<'coverage', Promise<TableCoverage>>();
 
 	constructor(snapshot: TableSnapshot) {
 		this.revision = snapshot.revision;
 		// The development server has no built worker; there the calculation runs in place.
 		if (import.meta.env.DEV) {
 			const tasks = createTasks(snapshot);
-			this.#run = async (name, args) =>
-				(tasks[name] as (...values: unknown[]) => ReturnType<Tasks[typeof name]>)(...args);
+			this.#run = (name, args) =>
+				new Promise((resolve) =>
+					resolve((tasks[name] as (...values: unknown[]) => ReturnType<Tasks[typeof name]>)(...args))
+				);
 			return;
 		}
 		const workers = new Piscina({
@@ -65,6 +80,40 @@ class Estimator {
 		return remember(this.#roots, key, () => this.#run('root', [tooth, root, kept]));
 	}
 
+	/** Coverage of a root's questions; some tenths of a second where there are many samples. */
+	coverage(tooth: string, root: string, filters: Filters): Promise<RootCoverage> {
+		const kept = canonical(filters);
+		const key = JSON.stringify([tooth, root, kept]);
+		const found = remember(this.#coverages, key, () => this.#run('coverage', [tooth, root, kept]));
+		// Each time, for the two caches may have forgotten different ones.
+		return found.then((coverage) => {
+			this.#knownCoverages.set(key, coverage);
+			return coverage;
+		});
+	}
+
+	/** The same if it is known; else null, and it is worked out when no other is. */
+	coverageIfKnown(tooth: string, root: string, filters: Filters): RootCoverage | null {
+		const key = JSON.stringify([tooth, root, canonical(filters)]);
+		const known = this.#knownCoverages.get(key);
+		if (known) return known;
+		if (this.#queuedCoverages.has(key)) return null;
+		const added = this.#inBackground.add(() =>
+			this.coverage(tooth, root, filters).finally(() => this.#queuedCoverages.delete(key))
+		);
+		if (added) this.#queuedCoverages.add(key);
+		return null;
+	}
+
+	/** Coverage over all roots, without filters. One root after another, so that requests get their turn in between. */
+	tableCoverage(): Promise<TableCoverage> {
+		return remember(this.#table, 'coverage', async () => {
+			const roots: RootCoverage[] = [];
+			for (const { tooth, root } of ANSWERED_ROOTS) roots.push(await this.coverage(tooth, root, {}));
+			return sumCoverage(roots);
+		});
+	}
+
 	tooth(tooth: string): Promise<ToothAnswer> {
 		return remember(this.#teeth, tooth, () => this.#run('tooth', [tooth]));
 	}
@@ -81,32 +130,6 @@ class Estimator {
 	async stop(): Promise<void> {
 		await this.#workers?.close();
 	}
-}
-
-type Keep<Value> = { get(key: string): Value | undefined; set(key: string, value: Value): unknown; delete(key: string): unknown };
-
-/** Computes once what is asked for under a key; a failure is not kept. */
-function remember<Value>(kept: Keep<Promise<Value>>, key: string, compute: () => Promise<Value>): Promise<Value> {
-	const known = kept.get(key);
-	if (known) return known;
-	const value = compute();
-	kept.set(key, value);
-	value.catch(() => kept.delete(key));
-	return value;
-}
-
-/** Filters in one order and without repeats or empty lists, so that equal filters are one key. */
-function canonical(filters: Filters): Filters {
-	const list = (values?: string[]) => (values?.length ? [...new Set(values)].sort() : undefined);
-	const all: Filters = {
-		methods: list(filters.methods),
-		countries: list(filters.countries),
-		yearFrom: filters.yearFrom,
-		yearTo: filters.yearTo,
-		minTotal: filters.minTotal,
-		exclude: list(filters.exclude)
-	};
-	return Object.fromEntries(Object.entries(all).filter(([, value]) => value !== undefined));
 }
 
 // Hot reload evaluates this module again; the threads must not be left behind.
@@ -127,7 +150,15 @@ export async function estimator(): Promise<Estimator> {
 		if (held.watersmeetEstimator?.ready === ready) held.watersmeetEstimator = undefined;
 	});
 	// Requests that began on the old revision may still have a second task to run on it.
-	if (present) setTimeout(() => void present.ready.then((old) => old.stop()), OLD_REVISION_GRACE_MS).unref();
+	if (present) {
+		const stopOld = () =>
+			present.ready.then(
+				(old) => old.stop(),
+				// It never came to be, as those who asked for it were told.
+				() => undefined
+			);
+		setTimeout(() => void stopOld(), OLD_REVISION_GRACE_MS).unref();
+	}
 	return ready;
 }
 

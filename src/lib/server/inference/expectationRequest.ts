@@ -1,5 +1,5 @@
 import { classLabels } from '$lib/anatomy/classes';
-import { leafFacts, type Leaf } from '$lib/anatomy/sequence';
+import { leafFacts } from '$lib/anatomy/sequence';
 import type { Root, Tooth } from '$lib/anatomy/teeth';
 import type { FiltersInForce } from '$lib/schemas/common';
 import type { ExpectationDto } from '$lib/schemas/expectation';
@@ -7,6 +7,8 @@ import type { FeatureDto } from '$lib/schemas/teeth';
 import { featureName } from '$lib/strings/features';
 import { questionText } from '$lib/strings/questions';
 import { checkFilters } from './checkFilters';
+import type { RootCoverage } from './coverage';
+import { coverageDto } from './coverageRequest';
 import { estimator } from './estimator';
 import type { PooledFeature, RootAnswer } from './tasks';
 
@@ -14,13 +16,24 @@ import type { PooledFeature, RootAnswer } from './tasks';
  * What to expect of a root under some filters, in the API's shape.
  * @throws Problem 422 for a filter that names a country or source the table does not have
  */
-export async function expectationOf(tooth: Tooth, root: Root, filters: FiltersInForce): Promise<ExpectationDto> {
+export async function expectationOf(
+	tooth: Tooth,
+	root: Root,
+	filters: FiltersInForce
+): Promise<ExpectationDto> {
 	await checkFilters(filters, { countries: 'country', exclude: 'exclude' });
 	const current = await estimator();
-	return toDto(await current.root(tooth.id, root.id, filters), filters, current.revision);
+	const answer = await current.root(tooth.id, root.id, filters);
+	const coverage = current.coverageIfKnown(tooth.id, root.id, filters);
+	return toDto(answer, coverage, filters, current.revision);
 }
 
-function toDto(answer: RootAnswer, filters: FiltersInForce, tableRevision: number): ExpectationDto {
+function toDto(
+	answer: RootAnswer,
+	coverage: RootCoverage | null,
+	filters: FiltersInForce,
+	tableRevision: number
+): ExpectationDto {
 	const { model, expectation, features, named } = answer;
 	return {
 		tooth: model.tooth,
@@ -31,7 +44,7 @@ function toDto(answer: RootAnswer, filters: FiltersInForce, tableRevision: numbe
 		sequences: expectation.sequences.map(({ sequence, ...estimate }) => ({
 			sequence,
 			labels: classLabels(sequence),
-			fate: leafFacts(sequence as Leaf).fate,
+			fate: leafFacts(sequence).fate,
 			...estimate,
 			observed: observedOf(named, sequence)
 		})),
@@ -39,19 +52,22 @@ function toDto(answer: RootAnswer, filters: FiltersInForce, tableRevision: numbe
 		exits: expectation.exits,
 		fates: expectation.fates,
 		features: features.map(toFeatureDto),
-		questions: model.questions.map(({ id, borrowed, evidence, pooled, predictive, tau, observed }) => ({
-			id,
-			text: questionText[id],
-			borrowed,
-			studies: evidence,
-			pooled,
-			predictive,
-			tau,
-			observed
-		})),
+		questions: model.questions.map(
+			({ id, borrowed, evidence, pooled, predictive, tau, observed, method }) => ({
+				id,
+				text: questionText[id],
+				borrowed,
+				studies: evidence,
+				pooled,
+				predictive,
+				tau,
+				observed,
+				method
+			})
+		),
 		reviews: model.reviews,
-		notPooled: model.notPooled,
-		coverage: null
+		notPooled: model.notPooled.map(({ source, entry, reason }) => ({ source, entry, reason })),
+		coverage: coverage && coverageDto(coverage)
 	};
 }
 

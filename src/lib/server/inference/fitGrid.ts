@@ -5,7 +5,16 @@ import { StudyLikelihood } from './studyLikelihood';
 import type { LogLikelihood } from './studyLikelihood';
 import type { MuPrior, Study } from './types';
 
-/** Resolution of the grid; the defaults are what `pool` uses. */
+/**
+ * Resolution of the grid; the defaults are what `pool` uses.
+ *
+ * Evidence: 25 data sets (the five of tests/reference/pooling.json; no study; 0 of 1; 0 of 10 million; one, two
+ * and five times half of 10 million; none-and-all; 8 with n <= 4; 1,000 tiny; 400 and 2,000 ordinary or rare)
+ * against 60 effect nodes, mu step 0.2, 150 columns, depth 32. Largest error of any proportion | of any tau:
+ *   defaults 3.2e-5 | 3e-4. One thing changed at a time: mu step 0.6 2.4e-5, 1.4 6.6e-5; effect nodes 3 or 9 a
+ *   logit 3.2e-5, 7 throughout 6e-4 | 1.4e-2; 24 columns 3.2e-5, 10 columns 4e-3 | 2e-3; column step 0.5
+ *   4.3e-5 | 1.2e-3; depth 9 3.5e-5, 22 3.2e-5.
+ */
 export interface GridResolution {
 	/**
 	 * Nodes of the rule for each random effect: `effectNodes` at tau = 0 and `effectNodesPerTau` more for each
@@ -22,10 +31,10 @@ export interface GridResolution {
 	depth: number;
 }
 
-export const RESOLUTION: GridResolution = {
+const RESOLUTION: GridResolution = {
 	effectNodes: 5,
-	effectNodesPerTau: 6,
-	muStep: 0.8,
+	effectNodesPerTau: 5,
+	muStep: 1,
 	minColumns: 16,
 	columnStep: 0.35,
 	depth: 16
@@ -78,15 +87,30 @@ const MAX_MU_STEP_LOGITS = 0.8;
 /** Most nodes on one side of a column; reached only if something is wrong. */
 const MAX_SIDE = 400;
 
+/** What a grid is fitted to: the samples' likelihood as a function of (mu, tau), log-concave in mu. */
+export interface Likelihood {
+	readonly rows: { rowOf: Int32Array };
+	readonly size: number;
+	smallestError(): number;
+	save(): unknown;
+	restore(saved: unknown): void;
+	evaluate(mu: number, tau: number, size: number, terms?: Float64Array, at?: number): LogLikelihood;
+	/** A cheaper look, for finding where the mass is; without it `evaluate` is used. */
+	evaluateRoughly?(mu: number, tau: number, size: number): LogLikelihood;
+}
+
 /** ln N(mu; mean, sd²) + ln likelihood, up to a constant, at (mu, tau). */
 class Posterior {
 	constructor(
-		readonly likelihood: StudyLikelihood,
+		readonly likelihood: Likelihood,
 		private readonly prior: MuPrior
 	) {}
 
 	at(mu: number, tau: number, nodes: number, terms?: Float64Array, offset = 0) {
-		const result = this.likelihood.evaluate(mu, tau, nodes, terms, offset);
+		return this.withPrior(mu, this.likelihood.evaluate(mu, tau, nodes, terms, offset));
+	}
+
+	private withPrior(mu: number, result: LogLikelihood): LogLikelihood {
 		const precision = 1 / (this.prior.sd * this.prior.sd);
 		const d = mu - this.prior.mean;
 		result.value -= 0.5 * d * d * precision;
@@ -100,10 +124,11 @@ class Posterior {
 	 * Mode of mu at a given tau, near enough to anchor a grid: the last Newton step, half a width at most, is
 	 * taken (and its gain counted) on trust.
 	 */
-	mode(start: number, tau: number, nodes: number) {
+	mode(start: number, tau: number, nodes: number, roughly = false) {
 		let mu = start;
 		for (let iteration = 0; ; iteration++) {
-			const here = this.at(mu, tau, nodes);
+			const rough = roughly && this.likelihood.evaluateRoughly?.(mu, tau, nodes);
+			const here = rough ? this.withPrior(mu, rough) : this.at(mu, tau, nodes);
 			const step = -here.slope / here.curvature;
 			const gain = (step * here.slope) / 2;
 			if (gain < 0.125 || iteration === 60) {
@@ -133,7 +158,7 @@ function locate(posterior: Posterior, scale: number, start: number, resolution: 
 		for (let i = 0; i <= cells; i++) {
 			const v = low + i * cell;
 			const tau = scale * Math.sinh(v);
-			const mode = posterior.mode(mu, tau, nodesFor(resolution, tau));
+			const mode = posterior.mode(mu, tau, nodesFor(resolution, tau), true);
 			mu = mode.mu;
 			values.push(mode.value + Math.log(mode.width) - 0.5 * tau * tau + Math.log(Math.cosh(v)));
 			if (values[i] >= values[best]) {
@@ -179,14 +204,14 @@ function locate(posterior: Posterior, scale: number, start: number, resolution: 
 export function fitGrid(
 	studies: readonly Study[],
 	prior: MuPrior,
-	options: { keepStudies?: boolean; resolution?: Partial<GridResolution> } = {}
+	options: { keepStudies?: boolean; resolution?: Partial<GridResolution>; likelihood?: Likelihood } = {}
 ): GridFit {
 	if (!(Number.isFinite(prior.mean) && Number.isFinite(prior.sd) && prior.sd > 0)) {
 		throw new RangeError('the prior of mu needs a finite mean and a positive sd');
 	}
 	const resolution = { ...RESOLUTION, ...options.resolution };
 	const { muStep, minColumns, columnStep, depth } = resolution;
-	const likelihood = new StudyLikelihood(studies);
+	const likelihood: Likelihood = options.likelihood ?? new StudyLikelihood(studies);
 	const posterior = new Posterior(likelihood, prior);
 	const rows = likelihood.size;
 	const scale = likelihood.smallestError();

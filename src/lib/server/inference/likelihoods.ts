@@ -1,5 +1,5 @@
 import type { BetaCharacteristic, Characteristics } from './characteristics';
-import { TESTS } from '$lib/schemas/confluence';
+import { TESTS } from '$lib/schemas/terms';
 import { canalsKnown } from './confluenceQuestion';
 import type { ConfluenceQuestion, Finding, Result, Test } from './confluenceQuestion';
 import { gridMean } from './predictiveGrid';

@@ -8,9 +8,9 @@ import {
 } from '../../../../tests/support/inventedRoot';
 import { characteristicsFor } from './characteristics';
 import { answerConfluence } from './confluence';
-import { TESTS } from '$lib/schemas/confluence';
+import { TESTS } from '$lib/schemas/terms';
 import type { ConfluenceQuestion, Finding, Test } from './confluenceQuestion';
-import type { QuestionId } from './types';
+import type { PredictiveGrid, QuestionId } from './types';
 
 const characteristics = characteristicsFor(shippedCharacteristics(), 'maxillary-first-molar', 'MB');
 const root = inventedRoot(ordinaryGrids(), inventedGrid(0.3, 0.8));
@@ -24,8 +24,8 @@ function rootOfShare(sharedExit: number) {
 		...{ q1: 1, q2: 1, q3: 0, q4: sharedExit, q5: 0 },
 		...{ q6: 0.5, q7: 0.5, q8: 0.5, q9: 0.5 }
 	};
-	const grids = Object.entries(known).map(([id, p]) => [id, pointGrid(p)]);
-	return inventedRoot(Object.fromEntries(grids), pointGrid(0.5));
+	const grids = Object.entries(known).map(([id, p]) => [id, pointGrid(p)] as const);
+	return inventedRoot(Object.fromEntries(grids) as Record<QuestionId, PredictiveGrid>, pointGrid(0.5));
 }
 
 describe('what to test next', () => {

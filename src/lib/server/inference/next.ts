@@ -1,6 +1,6 @@
 import { leafFacts } from '$lib/anatomy/sequence';
 import type { Fate } from '$lib/anatomy/sequence';
-import { TESTS } from '$lib/schemas/confluence';
+import { TESTS } from '$lib/schemas/terms';
 import { DEFAULT_THRESHOLD } from './confluenceQuestion';
 import type { Test } from './confluenceQuestion';
 import type { Inquiry } from './inquiry';

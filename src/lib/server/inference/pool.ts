@@ -38,8 +38,12 @@ function placeEdges(cdf: (x: number) => number, low: number, high: number): Floa
 	return edges;
 }
 
-/** Point masses of the predictive distribution at the logit midpoints of the cells. */
-function makeGrid(mixture: Mixture): { grid: PredictiveGrid; edges: Float64Array; below: Float64Array } {
+/** Point masses of the predictive distribution at the logit midpoints of the cells, with the cells' edges (logits). */
+export function makeGrid(mixture: Mixture): {
+	grid: PredictiveGrid;
+	edges: Float64Array;
+	below: Float64Array;
+} {
 	const cdf = (x: number) => mixture.predictiveCdf(x);
 	const [outerLow, outerHigh] = mixture.range(8);
 	const clamp = (x: number) => Math.min(Math.max(x, -LOGIT_LIMIT), LOGIT_LIMIT);
@@ -106,7 +110,12 @@ export function pool(
 ): Pooled {
 	const level = options.level ?? DEFAULT_LEVEL;
 	if (!(level > 0 && level < 1)) throw new RangeError('the level must lie between 0 and 1');
-	const fit = fitGrid(studies, options.prior ?? DEFAULT_PRIOR, { resolution: options.resolution });
+	const { resolution } = options;
+	return summariseFit(fitGrid(studies, options.prior ?? DEFAULT_PRIOR, { resolution }), studies, level);
+}
+
+/** The summaries of a grid fitted to these studies. */
+export function summariseFit(fit: GridFit, studies: readonly Study[], level = DEFAULT_LEVEL): Pooled {
 	const mixture = new Mixture(fit);
 	const tails: [number, number] = [(1 - level) / 2, (1 + level) / 2];
 	const probabilities = [tails[0], 0.5, tails[1]];

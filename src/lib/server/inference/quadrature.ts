@@ -1,5 +1,5 @@
 /** Nodes and weights of a quadrature rule. */
-export interface Rule {
+interface Rule {
 	nodes: Float64Array;
 	weights: Float64Array;
 }

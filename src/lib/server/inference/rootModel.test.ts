@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { indexOf, row, rows, shippedIndex } from '../../../../tests/support/literatureTable';
+import { pool } from './pool';
 import { buildRootModel } from './rootModel';
 import { teeth } from '$lib/anatomy/teeth';
 import { gatherEvidence } from './evidence';
@@ -103,12 +104,25 @@ describe('buildRootModel', () => {
 		);
 		expect(some.isthmus).toBeNull();
 		expect(some.notPooled).toEqual([
-			expect.objectContaining({ source: 'b', reason: expect.stringMatching(/isthmus/i) })
+			expect.objectContaining({ source: 'b', reason: expect.stringMatching(/isthmus/i) as string })
 		]);
 		const table = ['c', 'd', 'e'].flatMap((source) => rows({ '1': 10 }, { source, total: 1000 }));
 		const all = buildRootModel(indexOf([...table, isthmus]), 'maxillary-first-molar', 'MB', {});
 		expect(all.isthmus?.evidence).toHaveLength(1);
 		expect(all.notPooled).toEqual([]);
+	});
+
+	it('shows the model that predicts the samples better, with both scores', () => {
+		const model = buildRootModel(shippedIndex(), 'mandibular-first-premolar', 'whole', {});
+		const { method, evidence, pooled } = question(model, 'q1');
+		expect(method.shown).toBe('method');
+		expect(method.logScore!.method).toBeGreaterThan(method.logScore!.plain);
+		expect(method.offsets.map(({ group }) => group)).toEqual(['laboratory']);
+		// Clearing and microtomography find more canals than CBCT, as the trade has it: common practice, no source.
+		expect(method.offsets[0].mean).toBeGreaterThan(0);
+		expect(pooled.mean).toBeLessThan(pool(evidence).pooled.mean);
+		// Three samples, all cleared teeth: nothing to compare.
+		expect(question(model, 'q2').method).toEqual({ shown: 'plain', logScore: null, offsets: [] });
 	});
 
 	it('takes a level, and gives the same digits twice', () => {

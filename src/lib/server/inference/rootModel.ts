@@ -3,10 +3,19 @@ import { borrowedPriors, gatherLenders } from './borrowing';
 import type { Lender } from './borrowing';
 import { gatherEvidence } from './evidence';
 import type { IsthmusCandidates, RootEvidence } from './evidence';
+import { chooseModel, poolByMethod } from './methodEffect';
 import { pool } from './pool';
 import type { TableIndex } from './tableIndex';
 import { QUESTION_IDS } from './types';
-import type { Filters, NotPooled, RootModel, RootQuestion } from './types';
+import type {
+	Filters,
+	MuPrior,
+	NotPooled,
+	QuestionId,
+	QuestionStudy,
+	RootModel,
+	RootQuestion
+} from './types';
 
 /** From this pooled share of roots with more than one canal on, all roots may stand for two-canal roots. */
 const NEARLY_ALL = 0.9;
@@ -20,7 +29,7 @@ interface RootModelOptions {
 }
 
 /**
- * Pools a root's questions.
+ * Pools a root's questions, each by the model that predicts its samples better.
  *
  * @param index the table made ready (indexTable); keep it for one revision of the table
  * @param tooth slug of the tooth
@@ -36,11 +45,9 @@ export function buildRootModel(
 ): RootModel {
 	const evidence = gatherEvidence(index, tooth, root, filters);
 	const priors = borrowedPriors(options.lenders ?? gatherLenders(index, filters), tooth, root);
-	const questions = QUESTION_IDS.map((id): RootQuestion => {
-		const studies = evidence.questions[id];
-		const pooled = pool(studies, { prior: priors[id], level: options.level });
-		return { ...pooled, id, evidence: studies, prior: priors[id], borrowed: studies.length === 0 };
-	});
+	const questions = QUESTION_IDS.map((id) =>
+		poolQuestion(id, evidence.questions[id], priors[id], options.level)
+	);
 	const isthmus = poolIsthmus(evidence, questions[0], options.level);
 	return {
 		tooth,
@@ -50,6 +57,28 @@ export function buildRootModel(
 		hasEvidence: questions.some(({ borrowed }) => !borrowed),
 		notPooled: [...evidence.notPooled, ...isthmus.notPooled],
 		reviews: evidence.reviews
+	};
+}
+
+/** The choice of the model is made anew under any filters, so that an answer depends on nothing but what was asked. */
+function poolQuestion(
+	id: QuestionId,
+	studies: QuestionStudy[],
+	prior: MuPrior,
+	level: number | undefined
+): RootQuestion {
+	const { shown, logScore } = chooseModel(studies, prior);
+	const { offsets, ...pooled } =
+		shown === 'method'
+			? poolByMethod(studies, { prior, level })
+			: { ...pool(studies, { prior, level }), offsets: [] };
+	return {
+		...pooled,
+		id,
+		evidence: studies,
+		prior,
+		method: { shown, logScore, offsets },
+		borrowed: studies.length === 0
 	};
 }
 

@@ -2,6 +2,7 @@ import { gatherLenders } from './borrowing';
 import { characteristicsFor } from './characteristics';
 import { answerConfluence, type ConfluenceAnswer } from './confluence';
 import type { ConfluenceQuestion } from './confluenceQuestion';
+import { rootCoverage, type RootCoverage } from './coverage';
 import { gatherCounts, type CountSample } from './counts';
 import { expectRoot, type Expectation } from './expectation';
 import { gatherFeatures } from './features';
@@ -45,6 +46,7 @@ export interface ToothAnswer {
 /** The calculations a worker does; each argument and result can be cloned from thread to thread. */
 export interface Tasks {
 	root(tooth: string, root: string, filters: Filters): RootAnswer;
+	coverage(tooth: string, root: string, filters: Filters): RootCoverage;
 	tooth(tooth: string): ToothAnswer;
 	confluence(model: RootModel, question: ConfluenceQuestion): ConfluenceAnswer;
 	pool(studies: Study[], level: number | undefined): Omit<Pooled, 'grid'>;
@@ -80,6 +82,7 @@ export function createTasks(table: {
 				features: features(tooth, root, filters)
 			};
 		},
+		coverage: (tooth, root, filters) => rootCoverage(indexed(), tooth, root, filters, lendersFor(filters)),
 		tooth: (tooth) => ({
 			rootCounts: gatherCounts(indexed(), tooth, 'root-count', {}),
 			canalCounts: gatherCounts(indexed(), tooth, 'canal-count', {}),

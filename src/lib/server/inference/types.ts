@@ -118,11 +118,40 @@ export interface ReviewFigure {
 	percent: number;
 }
 
+/** Groups of methods with an offset against CBCT: microtomography, clearing and sectioning; clinical and microscope; radiograph. */
+export const OFFSET_GROUPS = ['laboratory', 'clinical', 'radiograph'] as const;
+export type OffsetGroup = (typeof OFFSET_GROUPS)[number];
+
+/** How far a group of methods differs from CBCT on the logit scale; positive: it finds more. */
+export interface MethodOffset {
+	group: OffsetGroup;
+	mean: number;
+	interval: [number, number];
+	studies: number;
+}
+
+/** The two models of a question: methods alike, or each group with its offset. */
+export type ModelName = 'plain' | 'method';
+
+/** Which of the two models of a question is shown, and why. */
+export interface QuestionMethod {
+	shown: ModelName;
+	/**
+	 * Sum over the samples of ln of the probability that each model, fitted to the other samples, gave to the count that
+	 * was seen; nearer to 0 is better. Null where the two cannot be compared: under three samples, or one group.
+	 */
+	logScore: Record<ModelName, number> | null;
+	/** Of the groups that have samples, if the method model is shown. */
+	offsets: MethodOffset[];
+}
+
 /** A question of one root, pooled. */
 export interface RootQuestion extends Pooled {
 	id: QuestionId;
 	evidence: QuestionStudy[];
 	prior: MuPrior;
+	/** With the method model shown, the figures are those of a population examined by CBCT. */
+	method: QuestionMethod;
 	/** True when no sample of this root answers the question, so that the figures are the prior's. */
 	borrowed: boolean;
 }

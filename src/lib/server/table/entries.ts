@@ -51,30 +51,30 @@ export interface EntriesPage {
  */
 export async function listEntries(db: Sequelize, query: EntriesQuery): Promise<EntriesPage> {
 	const where = ["entry.state = 'published'"];
-	const replacements: Record<string, string | number> = {};
+	const bind: Record<string, string | number> = {};
 	for (const name of ['tooth', 'root', 'method', 'country'] as const) {
 		if (query[name] === undefined) continue;
-		where.push(`sample.${name} = :${name}`);
-		replacements[name] = query[name];
+		where.push(`sample.${name} = $${name}`);
+		bind[name] = query[name];
 	}
 	if (query.measure) {
-		where.push('entry.measure = :measure');
-		replacements.measure = query.measure;
+		where.push('entry.measure = $measure');
+		bind.measure = query.measure;
 	}
 	if (query.source) {
-		where.push('entry.source_id = :source');
-		replacements.source = query.source;
+		where.push('entry.source_id = $source');
+		bind.source = query.source;
 	}
 	if (query.q) {
-		where.push(`(entry.source_id LIKE :q ESCAPE '\\' OR source.title LIKE :q ESCAPE '\\' OR sample.scope LIKE :q ESCAPE '\\'
-			OR entry.locator LIKE :q ESCAPE '\\'
+		where.push(`(entry.source_id LIKE $q ESCAPE '\\' OR source.title LIKE $q ESCAPE '\\' OR sample.scope LIKE $q ESCAPE '\\'
+			OR entry.locator LIKE $q ESCAPE '\\'
 			OR EXISTS (SELECT 1 FROM figure WHERE figure.entry_id = entry.id
-				AND (figure.note LIKE :q ESCAPE '\\' OR figure.category LIKE :q ESCAPE '\\')))`);
-		replacements.q = likePattern(query.q);
+				AND (figure.note LIKE $q ESCAPE '\\' OR figure.category LIKE $q ESCAPE '\\')))`);
+		bind.q = likePattern(query.q);
 	}
 	const [{ total }] = await db.query<{ total: number }>(
 		`SELECT COUNT(*) AS total ${FROM} WHERE ${where.join(' AND ')}`,
-		{ type: QueryTypes.SELECT, replacements }
+		{ type: QueryTypes.SELECT, bind }
 	);
 
 	const descending = query.sort.startsWith('-');
@@ -83,14 +83,14 @@ export async function listEntries(db: Sequelize, query: EntriesQuery): Promise<E
 	if (query.cursor) {
 		const cursor = decodeCursor(query.cursor, query.sort);
 		const beyond = descending ? '<' : '>';
-		where.push(`(${key} ${beyond} :afterKey OR (${key} = :afterKey AND entry.id ${beyond} :afterId))`);
-		replacements.afterKey = cursor.key;
-		replacements.afterId = Number(cursor.id);
+		where.push(`(${key} ${beyond} $afterKey OR (${key} = $afterKey AND entry.id ${beyond} $afterId))`);
+		bind.afterKey = cursor.key;
+		bind.afterId = cursor.id;
 	}
 	const rows = await db.query<EntryRow>(
 		`SELECT ${COLUMNS}, ${key} AS sortKey ${FROM} WHERE ${where.join(' AND ')}
-			ORDER BY ${key} ${order}, entry.id ${order} LIMIT :limit`,
-		{ type: QueryTypes.SELECT, replacements: { ...replacements, limit: query.limit + 1 } }
+			ORDER BY ${key} ${order}, entry.id ${order} LIMIT $limit`,
+		{ type: QueryTypes.SELECT, bind: { ...bind, limit: query.limit + 1 } }
 	);
 	const page = rows.slice(0, query.limit);
 	const last = page.at(-1);
@@ -105,8 +105,8 @@ export async function listEntries(db: Sequelize, query: EntriesQuery): Promise<E
 /** An entry with its revisions, or null for an unknown or unpublished id. */
 export async function findEntry(db: Sequelize, id: number) {
 	const rows = await db.query<EntryRow>(
-		`SELECT ${COLUMNS} ${FROM} WHERE entry.id = :id AND entry.state IN ('published', 'withdrawn')`,
-		{ type: QueryTypes.SELECT, replacements: { id } }
+		`SELECT ${COLUMNS} ${FROM} WHERE entry.id = $id AND entry.state IN ('published', 'withdrawn')`,
+		{ type: QueryTypes.SELECT, bind: { id } }
 	);
 	const [entry] = await withFigures(rows);
 	if (!entry) return null;
@@ -128,9 +128,9 @@ export async function findEntry(db: Sequelize, id: number) {
 /** Published entries of one source, by tooth and root. */
 export async function entriesOfSource(db: Sequelize, source: string): Promise<EntryDto[]> {
 	const rows = await db.query<EntryRow>(
-		`SELECT ${COLUMNS} ${FROM} WHERE entry.source_id = :source AND entry.state = 'published'
+		`SELECT ${COLUMNS} ${FROM} WHERE entry.source_id = $source AND entry.state = 'published'
 			ORDER BY sample.tooth, sample.root, entry.measure, entry.id`,
-		{ type: QueryTypes.SELECT, replacements: { source } }
+		{ type: QueryTypes.SELECT, bind: { source } }
 	);
 	return withFigures(rows);
 }

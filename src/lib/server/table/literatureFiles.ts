@@ -50,7 +50,7 @@ export interface LiteratureFiles {
  * Reads CSV text with a header line (RFC 4180).
  * @throws when a row has another number of cells than the header
  */
-export function readCsv(text: string): CsvRow[] {
+function readCsv(text: string): CsvRow[] {
 	const rows: { record: Record<string, string>; info: { lines: number } }[] = parse(text, {
 		columns: true,
 		bom: true,

@@ -6,8 +6,8 @@ export async function countriesOf(tooth: string): Promise<string[]> {
 	const db = await serverDatabase();
 	const rows = await db.query<{ country: string }>(
 		`SELECT DISTINCT sample.country FROM sample JOIN entry ON entry.sample_id = sample.id
-			WHERE sample.tooth = :tooth AND entry.state = 'published'`,
-		{ type: QueryTypes.SELECT, replacements: { tooth } }
+			WHERE sample.tooth = $tooth AND entry.state = 'published'`,
+		{ type: QueryTypes.SELECT, bind: { tooth } }
 	);
 	const codes = rows.flatMap(({ country }) => country.split('+')).filter((code) => /^[A-Z]{3}$/.test(code));
 	return [...new Set(codes)].sort();

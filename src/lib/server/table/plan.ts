@@ -27,7 +27,7 @@ export interface PlannedEntry {
 	figures: PlannedFigure[];
 }
 
-export interface PlannedFigure {
+interface PlannedFigure {
 	category: string;
 	count: number | null;
 	percent: number | null;

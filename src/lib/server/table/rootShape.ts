@@ -6,7 +6,7 @@ import { measurementsOf } from './measurements';
 const ASSUMED_LENGTH_MM = 13;
 
 /** A length or level with the place it comes from; `source` null: assumed. */
-export interface Placed {
+interface Placed {
 	mm: number;
 	/** Published range in mm where the source gives no mean; then `mm` is its middle. */
 	range: [number, number] | null;

@@ -46,12 +46,14 @@ export async function seedLiterature(db: Sequelize, files: LiteratureFiles): Pro
 	const sourceIds = new Set(files.sources.map((source) => source.id));
 	const { samples, unplaced } = planSamples(files.observations, sourceIds);
 
+	// From here until the end the table is that of no files: a start cut short must not be taken for the files before.
+	await TableRevision.update({ seedDigest: null }, { where: {} });
 	await seedSources(db, files.sources);
 	const written = await seedSamples(db, samples);
 	const withdrawn = await withdrawMissing(db, samples);
 	const leftOver = await replaceSupplements(db, files, sourceIds);
 	await listUnplaced(db, [...unplaced, ...leftOver]);
-	// Last of all: a start that was cut short finds no revision with this digest and seeds again.
+	// Last of all: a start that was cut short finds no revision with a digest and seeds again.
 	const revision = await TableRevision.create({
 		at: new Date().toISOString(),
 		why: latest ? 'The shipped literature changed.' : 'The shipped literature was loaded.',
@@ -231,7 +233,8 @@ async function withdrawMissing(db: Sequelize, planned: PlannedSample[]): Promise
 				order: [['number', 'DESC']],
 				transaction
 			});
-			await entry.update({ state: 'withdrawn' }, { transaction });
+			// Without its hash it counts as changed, and so is published again, should later files bring it back as it was.
+			await entry.update({ state: 'withdrawn', seedHash: null }, { transaction });
 			await Revision.create(
 				{
 					entryId: entry.id,

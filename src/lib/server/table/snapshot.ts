@@ -1,7 +1,7 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
 import type { FindingCharacteristic, ObservationRow, SourceFacts } from '../inference/types';
 import { TableRevision } from '../db/models/literature';
-import { Characteristic } from '../db/models/supplements';
+import { findingCharacteristics } from './characteristics';
 
 /** The published table as the estimator reads it, at one revision. */
 export interface TableSnapshot {
@@ -33,7 +33,6 @@ export async function readSnapshot(db: Sequelize): Promise<TableSnapshot> {
 		'SELECT id, citable, year, retracted FROM source ORDER BY id',
 		{ type: QueryTypes.SELECT }
 	);
-	const characteristics = await Characteristic.findAll({ order: ['id'] });
 	return {
 		revision,
 		rows: raw.map(({ confirmed, poolable, ...row }) => ({
@@ -46,16 +45,6 @@ export async function readSnapshot(db: Sequelize): Promise<TableSnapshot> {
 			citable: source.citable === 1,
 			retracted: source.retracted === 1
 		})),
-		characteristics: characteristics.map((row) => ({
-			finding: row.finding,
-			parameter: row.parameter,
-			toothGroup: row.toothGroup,
-			betaA: row.betaA,
-			betaB: row.betaB,
-			sdMm: row.sdMm,
-			basis: row.basis,
-			sourceIds: row.sourceIds.split(';').filter(Boolean),
-			note: row.note
-		}))
+		characteristics: await findingCharacteristics()
 	};
 }

@@ -28,23 +28,23 @@ const SELECT = `SELECT source.id, source.csl, source.title, source.year, source.
  */
 export async function listSources(db: Sequelize, query: z.infer<typeof sourcesQuerySchema>) {
 	const where = ['1 = 1'];
-	const replacements: Record<string, string | number> = { limit: query.limit + 1 };
+	const bind: Record<string, string | number> = {};
 	if (query.q) {
 		// The CSL text holds authors, journal and identifiers as well.
-		where.push("(source.id LIKE :q ESCAPE '\\' OR source.csl LIKE :q ESCAPE '\\')");
-		replacements.q = likePattern(query.q);
+		where.push("(source.id LIKE $q ESCAPE '\\' OR source.csl LIKE $q ESCAPE '\\')");
+		bind.q = likePattern(query.q);
 	}
 	const [{ total }] = await db.query<{ total: number }>(
 		`SELECT COUNT(*) AS total FROM source WHERE ${where.join(' AND ')}`,
-		{ type: QueryTypes.SELECT, replacements }
+		{ type: QueryTypes.SELECT, bind }
 	);
 	if (query.cursor) {
-		where.push('source.id > :after');
-		replacements.after = String(decodeCursor(query.cursor, ORDER).id);
+		where.push('source.id > $after');
+		bind.after = String(decodeCursor(query.cursor, ORDER).id);
 	}
 	const rows = await db.query<SourceRow>(
-		`${SELECT} WHERE ${where.join(' AND ')} ORDER BY source.id LIMIT :limit`,
-		{ type: QueryTypes.SELECT, replacements }
+		`${SELECT} WHERE ${where.join(' AND ')} ORDER BY source.id LIMIT $limit`,
+		{ type: QueryTypes.SELECT, bind: { ...bind, limit: query.limit + 1 } }
 	);
 	const page = rows.slice(0, query.limit);
 	const last = page.at(-1);
@@ -57,9 +57,9 @@ export async function listSources(db: Sequelize, query: z.infer<typeof sourcesQu
 
 /** A source with its CSL-JSON, or null for an unknown id. */
 export async function findSource(db: Sequelize, id: string): Promise<SourceDto | null> {
-	const [row] = await db.query<SourceRow>(`${SELECT} WHERE source.id = :id`, {
+	const [row] = await db.query<SourceRow>(`${SELECT} WHERE source.id = $id`, {
 		type: QueryTypes.SELECT,
-		replacements: { id }
+		bind: { id }
 	});
 	return row ? { ...toSourceSummary(row), csl: JSON.parse(row.csl) as CslSource } : null;
 }

@@ -14,6 +14,7 @@ export async function replaceSupplements(
 	sources: ReadonlySet<string>
 ): Promise<Unplaced[]> {
 	const cited = (cells: Record<string, string>) => whyNotCited(cells, sources);
+	const parameters = new Set<string>();
 	return [
 		...(await replace(db, Measurement, 'measurements.csv', files.measurements, cited, toMeasurement)),
 		...(await replace(db, Diagnostic, 'diagnostics.csv', files.diagnostics, cited, toDiagnostic)),
@@ -23,7 +24,7 @@ export async function replaceSupplements(
 			Characteristic,
 			'finding-characteristics.csv',
 			files.characteristics,
-			(cells) => whyNotCharacteristic(cells, sources),
+			(cells) => whyNotCharacteristic(cells, sources, parameters),
 			toCharacteristic
 		))
 	];
@@ -55,12 +56,25 @@ async function replace(
 	return unplaced;
 }
 
-function whyNotCharacteristic(cells: Record<string, string>, sources: ReadonlySet<string>): string | null {
+/** @param parameters those that earlier rows gave; this row's is added if it can be placed */
+function whyNotCharacteristic(
+	cells: Record<string, string>,
+	sources: ReadonlySet<string>,
+	parameters: Set<string>
+): string | null {
 	const ids = cells.source_ids.split(';').filter(Boolean);
 	const missing = ids.find((id) => !sources.has(id));
 	if (missing) return `The source ${missing} is not among the sources.`;
 	if (cells.basis === 'derived' && ids.length === 0) return 'A derived value must name its sources.';
 	if (!['derived', 'assumed'].includes(cells.basis)) return `The basis "${cells.basis}" is unknown.`;
+	const notPositive = ['beta_a', 'beta_b', 'sd_mm'].find((column) => {
+		const value = numberOrNull(cells[column]);
+		return value !== null && !(value > 0);
+	});
+	if (notPositive) return `${notPositive} must be a number above zero.`;
+	const parameter = JSON.stringify([cells.finding, cells.parameter, cells.tooth_group]);
+	if (parameters.has(parameter)) return 'An earlier row gives this parameter of the finding.';
+	parameters.add(parameter);
 	return null;
 }
 

@@ -4,5 +4,5 @@ import { serverDatabase } from '$lib/server/db/server';
 import { listSources } from '$lib/server/table/sources';
 
 export const GET = endpoint(async ({ url }) =>
-	listSources(await serverDatabase(), readQuery(url, sourcesQuerySchema))
+	listSources(await serverDatabase(), readQuery(url.searchParams, sourcesQuerySchema))
 );

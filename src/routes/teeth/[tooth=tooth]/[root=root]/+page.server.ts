@@ -1,7 +1,7 @@
 import { error } from '@sveltejs/kit';
 import { rootOf, toothOf } from '$lib/anatomy/teeth';
-import { FILTER_LISTS, filtersOfQuery, filtersQuerySchema } from '$lib/schemas/common';
-import { readQuery } from '$lib/server/api/endpoint';
+import { readFilterFields } from '$lib/filterQuery';
+import { readFilters } from '$lib/server/api/filters';
 import { Problem } from '$lib/server/api/problem';
 import { expectationOf } from '$lib/server/inference/expectationRequest';
 import { countriesOf } from '$lib/server/table/places';
@@ -14,12 +14,11 @@ export const load: PageServerLoad = async ({ params, url }) => {
 	const root = rootOf(params.tooth, params.root);
 	if (!tooth || !root) error(404, 'Unknown root.');
 
-	let filters = {};
+	const filters = readFilterFields(url.searchParams);
 	let filterErrors: { path: string; message: string }[] = [];
 	let expectation;
 	try {
-		filters = filtersOfQuery(readQuery(withoutBlanks(url), filtersQuerySchema, FILTER_LISTS));
-		expectation = await expectationOf(tooth, root, filters);
+		expectation = await expectationOf(tooth, root, readFilters(filters));
 	} catch (problem) {
 		if (!(problem instanceof Problem) || problem.status !== 422) throw problem;
 		// The page still answers, unfiltered, and says at which field the filters went wrong.
@@ -33,25 +32,16 @@ export const load: PageServerLoad = async ({ params, url }) => {
 		...expectation.notPooled,
 		...expectation.reviews
 	].map(({ source }) => source);
+	for (const [name, value] of filters) if (name === 'exclude') cited.push(value);
 	for (const placed of [shape.length, shape.confluence]) if (placed?.source) cited.push(placed.source);
 	return {
 		tooth: { id: tooth.id, name: tooth.name },
 		root: { id: root.id, name: root.name },
 		expectation,
-		typed: Object.fromEntries(
-			[...new Set(url.searchParams.keys())].map((name) => [name, url.searchParams.getAll(name)])
-		),
+		filters,
 		filterErrors,
 		countries: await countriesOf(tooth.id),
 		shape,
 		sources: await sourcesById([...new Set(cited)])
 	};
 };
-
-/** A form sends its empty fields too; they filter nothing. */
-function withoutBlanks(url: URL): URL {
-	const kept = new URL(url);
-	for (const [name, value] of url.searchParams)
-		if (value.trim() === '') kept.searchParams.delete(name, value);
-	return kept;
-}

@@ -6,5 +6,9 @@ import type { RequestEvent } from './$types';
 
 export const GET = endpoint<RequestEvent>(({ params, url }) => {
 	const { tooth, root } = knownRoot(params.tooth, params.root);
-	return expectationOf(tooth, root, filtersOfQuery(readQuery(url, filtersQuerySchema, FILTER_LISTS)));
+	return expectationOf(
+		tooth,
+		root,
+		filtersOfQuery(readQuery(url.searchParams, filtersQuerySchema, FILTER_LISTS))
+	);
 });

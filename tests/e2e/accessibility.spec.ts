@@ -1,0 +1,80 @@
+import { AxeBuilder } from '@axe-core/playwright';
+import type { Page } from '@playwright/test';
+import { PAGES } from './support/places';
+import { expect, test } from './support/test';
+
+const TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'];
+const WIDTHS_PX = [390, 1440];
+const NARROWEST_PX = 320;
+
+/** Opens what is folded away, which has to pass too; of the nine questions, which are built alike, only the first. */
+const unfold = (page: Page) =>
+	page.evaluate(() =>
+		document
+			.querySelectorAll<HTMLDetailsElement>('details:not([id^="q"]), details#q1')
+			.forEach((details) => (details.open = true))
+	);
+
+// A page that is not there is answered with 404, which the console reports.
+test.use({ expectedMessages: [/status of 404/] });
+
+for (const [name, address] of Object.entries(PAGES)) {
+	for (const colorScheme of ['light', 'dark'] as const) {
+		test(`${name}: axe finds nothing in ${colorScheme}, at 390 and 1440 px`, async ({ page }) => {
+			await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' });
+			test.slow();
+			for (const width of WIDTHS_PX) {
+				await page.setViewportSize({ width, height: 900 });
+				await page.goto(address);
+				await unfold(page);
+				const { violations, passes } = await new AxeBuilder({ page }).withTags(TAGS).analyze();
+				const found = violations.map(
+					({ id, nodes }) =>
+						`${id}: ${nodes.map(({ html, failureSummary }) => `${html} ${failureSummary}`).join('\n')}`
+				);
+				expect(found, `${address} at ${width} px`).toEqual([]);
+				expect(passes.length).toBeGreaterThan(10);
+			}
+		});
+	}
+
+	test(`${name}: nothing overflows at 320 px`, async ({ page }) => {
+		await page.setViewportSize({ width: NARROWEST_PX, height: 700 });
+		await page.goto(address);
+		await unfold(page);
+		const overflowing = await page.evaluate((width) => {
+			const wider = [...document.querySelectorAll('body *')].filter(
+				(one) => one.getBoundingClientRect().right > width + 1
+			);
+			return document.documentElement.scrollWidth > width
+				? wider
+						.slice(0, 8)
+						.map(
+							(one) =>
+								`${one.tagName} ${one.className.toString().slice(0, 60)} ${one.textContent?.trim().slice(0, 40)}`
+						)
+				: [];
+		}, NARROWEST_PX);
+		expect(overflowing).toEqual([]);
+	});
+}
+
+test('every control is at least 44 px high on a phone, or is a link in running text', async ({ page }) => {
+	await page.setViewportSize({ width: 390, height: 900 });
+	for (const address of [PAGES.home, PAGES.root, PAGES['join, three canals']]) {
+		await page.goto(address);
+		const small = await page.evaluate(() =>
+			[
+				...document.querySelectorAll(
+					'button, select, input:not([type=radio], [type=checkbox], [type=hidden]), label:has(input), a.button, a.button-quiet, summary'
+				)
+			]
+				.filter((one) => one.getClientRects().length > 0 && one.getBoundingClientRect().height < 43.5)
+				.map(
+					(one) =>
+						`${one.tagName} ${one.textContent?.trim().slice(0, 40)} ${one.getBoundingClientRect().height}`
+				)
+		);
+		expect(small, address).toEqual([]);
+	}
+});
