@@ -56,7 +56,11 @@ function calculations(snapshot: TableSnapshot) {
 		buildRootModel(index, RICHEST.tooth, RICHEST.root, filters, { lenders });
 		return performance.now() - started;
 	});
-	print('cold: nine questions of the richest root, median', `${median(cold).toFixed(0)} ms`, 'target ≤ 300 ms');
+	print(
+		'cold: nine questions of the richest root, median',
+		`${median(cold).toFixed(0)} ms`,
+		'target ≤ 300 ms'
+	);
 
 	const { model } = tasks.root(RICHEST.tooth, RICHEST.root, {});
 	for (let k = 0; k < 20; k++) tasks.confluence(model, FIVE_FINDINGS);
@@ -69,8 +73,14 @@ function calculations(snapshot: TableSnapshot) {
 }
 
 async function load(server: MeasuredServer, options: Omit<autocannon.Options, 'url'>, at: string) {
-	const result = await autocannon({ connections: 10, duration: LOAD_SECONDS, ...options, url: server.address + at });
-	if (result.non2xx > 0 || result.errors > 0) throw new Error(`${at}: ${result.non2xx + result.errors} requests failed.`);
+	const result = await autocannon({
+		connections: 10,
+		duration: LOAD_SECONDS,
+		...options,
+		url: server.address + at
+	});
+	if (result.non2xx > 0 || result.errors > 0)
+		throw new Error(`${at}: ${result.non2xx + result.errors} requests failed.`);
 	return result.requests.average;
 }
 
@@ -86,7 +96,11 @@ async function rates(server: MeasuredServer) {
 	const health = await load(server, {}, '/health');
 	print('/health', `${health.toFixed(0)} /s`, 'what the rest is measured against');
 	const estimates = await load(server, post, '/api/v1/confluence');
-	print('/confluence with five findings, share of /health', (estimates / health).toFixed(3), `${estimates.toFixed(0)} /s`);
+	print(
+		'/confluence with five findings, share of /health',
+		(estimates / health).toFixed(3),
+		`${estimates.toFixed(0)} /s`
+	);
 	const pages = await load(server, {}, ROOT_PAGE);
 	print('root page, share of /health', (pages / health).toFixed(3), `${pages.toFixed(0)} /s`);
 
@@ -106,7 +120,9 @@ async function coldAtOnce(server: MeasuredServer) {
 	const started = performance.now();
 	const answers = await Promise.all(
 		Array.from({ length: COLD_AT_ONCE }, (_, k) =>
-			fetch(`${server.address}/api/v1/teeth/${RICHEST.tooth}/roots/${RICHEST.root}/expectation?minTotal=${k + 20}`)
+			fetch(
+				`${server.address}/api/v1/teeth/${RICHEST.tooth}/roots/${RICHEST.root}/expectation?minTotal=${k + 20}`
+			)
 		)
 	);
 	const seconds = (performance.now() - started) / 1000;

@@ -180,7 +180,8 @@ test('the filters of the entries leave what they say, alone and together', async
 		{ country: 'BRA' },
 		{ source: 'cleghorn-2007' },
 		{ tooth: 'maxillary-first-molar', root: 'MB', method: 'cbct' },
-		{ tooth: 'mandibular-canine', country: 'TUR', measure: 'configuration' }
+		{ tooth: 'mandibular-canine', country: 'SAU', measure: 'configuration' },
+		{ country: 'CHE+DEU' }
 	]) {
 		const query = new URLSearchParams({ ...wanted, limit: '200' });
 		const { items, total } = await walk<Entry>(request, 'entries', query.toString());

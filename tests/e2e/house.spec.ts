@@ -196,7 +196,12 @@ test('on SIGTERM a running request is finished, the database closed, and the pro
 	await once(running, 'continue');
 	running.write(body.slice(0, 10));
 	server.signal('SIGTERM');
-	await expect(() => fetch(`${server.origin}/health`)).rejects.toThrow();
+	const newcomer = () =>
+		fetch(`${server.origin}/health`).then(
+			() => 'answered',
+			() => 'turned away'
+		);
+	await expect.poll(newcomer).toBe('turned away');
 	running.end(body.slice(10));
 	expect(JSON.parse(await answered)).toMatchObject({ studies: 1, observed: { min: 0.3, max: 0.3 } });
 	const { code, output } = await server.ended();
