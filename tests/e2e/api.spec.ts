@@ -172,7 +172,7 @@ test('the filters of the entries leave what they say, alone and together', async
 		all.filter((entry) =>
 			Object.entries(wanted).every(([name, value]) => entry[name as keyof Entry] === value)
 		);
-	for (const wanted of [
+	const queries: Record<string, string>[] = [
 		{ tooth: 'maxillary-first-molar' },
 		{ root: 'MB' },
 		{ measure: 'feature' },
@@ -182,7 +182,8 @@ test('the filters of the entries leave what they say, alone and together', async
 		{ tooth: 'maxillary-first-molar', root: 'MB', method: 'cbct' },
 		{ tooth: 'mandibular-canine', country: 'SAU', measure: 'configuration' },
 		{ country: 'CHE+DEU' }
-	]) {
+	];
+	for (const wanted of queries) {
 		const query = new URLSearchParams({ ...wanted, limit: '200' });
 		const { items, total } = await walk<Entry>(request, 'entries', query.toString());
 		const expected = matching(wanted);

@@ -46,11 +46,6 @@ def beta_quantile(p, a, b):
     return 1 / (1 + exp(-low))
 
 
-def normal_quantile(p):
-    with mp.workdps(400):  # 2p - 1 needs the digits of the smallest p
-        return sqrt(mpf(2)) * erfinv(2 * mpf(p) - 1)
-
-
 out = {
     "note": "mpmath 1.3.0, 60 digits; made by special.py",
     "logGamma": [[x, float(loggamma(mpf(x)))] for x in
@@ -72,9 +67,6 @@ out = {
     "normalCdf": [[x, float(ncdf(mpf(x)))] for x in
                   [-37, -20, -10, -6, -5.6, -4, -2.5, -1.959963984540054, -1, -0.7, -0.67, -0.3, -1e-5, 0,
                    1e-5, 0.3, 0.67, 0.7, 1, 1.96, 3, 5, 8]],
-    "normalQuantile": [[p, float(normal_quantile(p))] for p in
-                       [1e-300, 1e-100, 1e-20, 1e-10, 1e-6, 0.001, 0.025, 0.07, 0.08, 0.2, 0.4, 0.499, 0.5,
-                        0.6, 0.75, 0.9, 0.92, 0.93, 0.975, 0.999, 0.999999]],
     "betaPowerMoment": [[A, B, a, b, float(beta(mpf(A) + a, mpf(B) + b) / beta(mpf(A), mpf(B)))]
                         for A, B, a, b in [(2, 3, 1, 0), (45, 5.5, 2, 1), (0.5, 0.5, 0, 2), (9, 1, 0.5, 0),
                                            (300, 20, 1.5, 2.5), (1, 1, 30, 30)]],

@@ -11,7 +11,7 @@ export interface CoveragePoint {
 }
 
 /** One dot; questions with the same samples and share stand side by side. */
-export interface CoverageDot {
+interface CoverageDot {
 	id: string;
 	x: number;
 	y: number;

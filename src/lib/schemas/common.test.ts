@@ -30,6 +30,8 @@ describe('filters of a body', () => {
 		['a year after all', { yearTo: 2101 }, 'yearTo'],
 		['half a year', { yearTo: 2000.5 }, 'yearTo'],
 		['a year in words', { yearFrom: 'lately' }, 'yearFrom'],
+		['a year as text', { yearFrom: '1990' }, 'yearFrom'],
+		['a total as text', { minTotal: '100' }, 'minTotal'],
 		['a total of nothing', { minTotal: 0 }, 'minTotal'],
 		['an empty source', { exclude: [''] }, 'exclude.0'],
 		['a list that is none', { methods: 'cbct' }, 'methods'],

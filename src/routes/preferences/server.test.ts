@@ -1,5 +1,5 @@
 import { PREFERENCES_COOKIE } from '$lib/server/hooks/preferences';
-import { isRedirect, type Cookies } from '@sveltejs/kit';
+import { isHttpError, isRedirect, type Cookies } from '@sveltejs/kit';
 import { describe, expect, it } from 'vitest';
 import { requestEvent } from '../../../tests/support/requestEvent';
 import { POST } from './+server';
@@ -54,5 +54,36 @@ describe('the preferences form', () => {
 
 	it('leads to the start without an address', async () => {
 		expect((await send({ theme: 'dark', numbers: 'iso' })).location).toBe('/');
+	});
+
+	it.each([
+		['JSON', '{"theme":"dark"}', 'application/json'],
+		['no form at all', 'theme=dark', 'text/plain'],
+		['a form cut short', 'theme=dark', 'multipart/form-data; boundary=x']
+	])('refuses %s with 400', async (_, body, type) => {
+		const request = new Request(`${ORIGIN}/preferences`, {
+			method: 'POST',
+			body,
+			headers: { 'content-type': type }
+		});
+		const thrown: unknown = await Promise.resolve(POST(requestEvent(request))).catch(
+			(error: unknown) => error
+		);
+		expect(isHttpError(thrown, 400)).toBe(true);
+	});
+
+	it.each([
+		['https://canals.example.org', true],
+		['http://localhost:3000', false],
+		['http://192.0.2.7:3000', false]
+	])('keeps the cookie at %s for https alone: %s', async (origin, secure) => {
+		let options: unknown;
+		const cookies = {
+			set: (_: string, __: string, given: unknown) => (options = given)
+		} as unknown as Cookies;
+		const form = new URLSearchParams({ theme: 'dark', numbers: 'iso' });
+		const request = new Request(`${origin}/preferences`, { method: 'POST', body: form });
+		await Promise.resolve(POST(requestEvent(request, { cookies }))).catch(() => undefined);
+		expect(options).toMatchObject({ httpOnly: true, sameSite: 'lax', path: '/', secure });
 	});
 });

@@ -1,7 +1,7 @@
 import { level as words } from '$lib/strings/level';
 
 /** Fields of the level as the address writes them, in their order on the page. */
-export const LEVEL_FIELDS = [
+const LEVEL_FIELDS = [
 	'wl1',
 	'wl2',
 	'mark',

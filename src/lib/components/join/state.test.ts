@@ -1,7 +1,7 @@
 import { FILTER_FIELDS, TESTS } from '$lib/schemas/terms';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { LEVEL_FIELDS } from './levelState';
+import type { LevelState } from './levelState';
 import { readState, withFinding, writeState, type JoinState } from './state';
 
 const query = (text: string) => readState(new URLSearchParams(text));
@@ -26,6 +26,10 @@ const findings = fc
 			)
 		)
 	);
+const level: Record<keyof LevelState, typeof typed> = {
+	...{ wl1: typed, wl2: typed, mark: typed, markShort: typed, shortfall: typed, contact: typed, cbct: typed },
+	...{ shapedTo: typed, tip: typed, taper: typed, coneTip: typed, coneTaper: typed }
+};
 /** Grouped by name in the order in which an address is read. */
 const filters = fc
 	.tuple(
@@ -46,7 +50,7 @@ const states: fc.Arbitrary<JoinState> = fc
 			search: typed,
 			threshold: number,
 			findings,
-			level: fc.record(Object.fromEntries(LEVEL_FIELDS.map((field) => [field, typed])), { requiredKeys: [] }),
+			level: fc.record(level, { requiredKeys: [] }),
 			filters
 		},
 		{ requiredKeys: ['findings', 'level', 'filters'] }

@@ -10,7 +10,8 @@ const REASONS: Record<number, string> = {
 	413: 'The body is too large',
 	415: 'The body is not application/json',
 	422: 'A value is missing or out of range; errors name the field',
-	429: 'Too many requests; Retry-After says when to try again'
+	429: 'Too many requests; Retry-After says when to try again',
+	503: 'Too many calculations are waiting, or the database does not answer'
 };
 
 const PATH_PARAMETERS: Record<string, Json> = {
@@ -60,7 +61,7 @@ export function describeOperations() {
 				required: parameter.required === true,
 				...(typeof parameter.description === 'string' && { description: parameter.description })
 			})),
-			failures: [...failures, 429].map((status) => ({
+			failures: [...failures, 429, 503].map((status) => ({
 				status: String(status),
 				description: REASONS[status]
 			})),
@@ -87,7 +88,7 @@ function exampleOf({ exampleParameters = {} }: Operation, name: string): string 
 
 function describe(operation: Operation): Json {
 	const failures = Object.fromEntries(
-		[...operation.failures, 429].map((status) => [
+		[...operation.failures, 429, 503].map((status) => [
 			String(status),
 			{
 				description: REASONS[status],

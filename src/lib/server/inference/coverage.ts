@@ -83,6 +83,7 @@ function overall(questions: readonly QuestionCoverage[]): CoverageFigures | null
  * @param prior of mu, as the root's question has it
  * @param model shown by the log score unless named
  * @returns null with fewer than three samples: each must have two others
+ * @internal exported for its tests
  */
 export function questionCoverage(
 	id: QuestionId,
