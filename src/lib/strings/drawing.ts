@@ -65,7 +65,8 @@ export const drawing = {
 		samples: 'samples left out in turn (logarithmic)',
 		expected: (level: string) =>
 			`Solid line: ${level}, what the ranges claim. Each dot is one question of one root.`,
-		flag: (from: string) => `Dashed line: ${from}; questions under it are drawn as diamonds and named below.`
+		flag: (from: string) =>
+			`Dashed line: ${from}. Diamonds: questions under it, or with under 70 % of samples in their 80 % range; they are named below.`
 	},
 	interval: {
 		text: (label: string, mean: number, interval: readonly [number, number]) =>
