@@ -1,4 +1,4 @@
-import { mkdtempSync } from 'node:fs';
+import { randomUUID } from 'node:crypto';
 import os from 'node:os';
 import path from 'node:path';
 import process from 'node:process';
@@ -7,11 +7,10 @@ import { chromiumOrReason } from './tests/support/chromium.js';
 import { freePort } from './tests/support/freePort.js';
 
 const chromium = chromiumOrReason();
-if ('reason' in chromium) throw new Error(chromium.reason);
 
-// The workers read this file again and inherit what the first reading settled.
+// The workers read this file again and inherit what the first reading settled; knip reads it too, so reading it makes nothing.
 process.env.E2E_PORT ??= String(await freePort());
-process.env.E2E_DATA ??= mkdtempSync(path.join(os.tmpdir(), 'watersmeet-e2e-'));
+process.env.E2E_DATA ??= path.join(os.tmpdir(), `watersmeet-e2e-${randomUUID()}`);
 const origin = `http://localhost:${process.env.E2E_PORT}`;
 const isRoot = process.getuid?.() === 0;
 
@@ -28,7 +27,11 @@ export default defineConfig({
 		baseURL: origin,
 		viewport: { width: 1280, height: 900 },
 		// The system's own browser: `channel` would look for a download of Playwright's. Root has no sandbox.
-		launchOptions: { executablePath: chromium.path, args: isRoot ? ['--no-sandbox'] : [] }
+		// Where there is none, Playwright says how to get its own.
+		launchOptions: {
+			...('path' in chromium && { executablePath: chromium.path }),
+			args: isRoot ? ['--no-sandbox'] : []
+		}
 	},
 	webServer: {
 		command: 'node src/cli/start.js',

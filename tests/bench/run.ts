@@ -92,7 +92,8 @@ async function rates(server: MeasuredServer) {
 		body: ESTIMATE
 	};
 	// Once each before measuring: the caches are warm, as they are in use.
-	await fetch(server.address + ROOT_PAGE);
+	// Read to its end: a body left waiting would be torn off when the server stops.
+	await (await fetch(server.address + ROOT_PAGE)).text();
 	const health = await load(server, {}, '/health');
 	print('/health', `${health.toFixed(0)} /s`, 'what the rest is measured against');
 	const estimates = await load(server, post, '/api/v1/confluence');

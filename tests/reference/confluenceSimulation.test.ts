@@ -137,6 +137,9 @@ const words = ({ canals, orifices, search, findings }: ConfluenceQuestion) =>
 	`${canals} canals, ${orifices ?? '?'} orifices, ${search ?? 'no search'}: ` +
 	findings.map(({ test, result }) => `${test} ${result}`).join(', ');
 
+/** Those common enough to be simulated; the others are checked against the enumeration alone. */
+const simulatedOnes: { at: number; question: ConfluenceQuestion }[] = [];
+
 describe('answers to questions about real roots', () => {
 	QUESTIONS.forEach(({ at, question }, index) => {
 		const { tooth, root, groups } = ROOTS[at];
@@ -153,6 +156,7 @@ describe('answers to questions about real roots', () => {
 			}
 			const simulated = simulate(scenario, KEPT, 7 + index);
 			if (!simulated) return;
+			simulatedOnes.push({ at, question });
 			for (const [name, { mean, interval }] of Object.entries(figures)) {
 				const other = simulated[name] ?? { mean: 0, lower: 0, upper: 0, frequency: 0 };
 				expect(Math.abs(mean - other.mean), `mean of ${name}`).toBeLessThan(MEANS_WITHIN);
@@ -162,5 +166,17 @@ describe('answers to questions about real roots', () => {
 				expect(Math.abs(interval[1] - other.upper), `upper end of ${name}`).toBeLessThan(ENDS_WITHIN);
 			}
 		});
+	});
+
+	// Without it, a simulation that gave up on every question would go unnoticed. It needs the whole file to have run.
+	it('were simulated for every root, with a draw test and with three canals among them', () => {
+		const roots = new Set(simulatedOnes.map(({ at }) => at));
+		expect(
+			ROOTS.filter((_, at) => !roots.has(at)).map(({ tooth, root }) => `${tooth} ${root}`),
+			'roots without a simulated question'
+		).toEqual([]);
+		const drawn = ({ test, result }: Finding) => test === 'draw' && result !== 'unclear';
+		expect(simulatedOnes.some(({ question }) => question.findings.some(drawn))).toBe(true);
+		expect(simulatedOnes.some(({ question }) => question.canals === 3)).toBe(true);
 	});
 });

@@ -77,7 +77,13 @@ export const confluenceResponseSchema = z.object({
 			furtherTestingCanChangeIt: z.boolean().nullable()
 		})
 		.nullable(),
-	evidence: z.object({ studies: z.number().int(), sources: z.array(z.string()) }),
+	evidence: z.object({
+		studies: z.number().int(),
+		sources: z.array(z.string()),
+		borrowed: z
+			.array(z.string())
+			.describe('Questions no sample of this root answers: their figures are borrowed from other roots')
+	}),
 	assumed: z.array(z.string()).describe('Findings used whose characteristics were never published'),
 	notes: z.array(z.string()),
 	cautions: z.array(z.string())

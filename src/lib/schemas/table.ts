@@ -91,6 +91,9 @@ export const sourcesQuerySchema = z.strictObject({
 	limit
 });
 
+/** The address of one source takes no parameter. */
+export const sourceQuerySchema = z.strictObject({});
+
 const sourceSummarySchema = z.object({
 	id: z.string(),
 	title: z.string().nullable(),

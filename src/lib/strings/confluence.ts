@@ -87,6 +87,10 @@ export const confluence = {
 			'No evidence: no sample of this root answers any question. The figures are borrowed from other roots, and no advice is given.'
 	},
 	cautions: {
+		joiningNotStudied:
+			'Whether canals of this root meet was studied in no sample of the table: that part is borrowed from other roots, so the answer rests on them and on your tests alone. Treat as separate unless you have seen that they join.',
+		meetAndPartSeen: (share: string) =>
+			`A sample saw canals that meet and part again in up to ${share} of these roots, more than the range above says. Its other classes are not complete, so it is not pooled for this. Make sure that the exits are one before you shorten a canal.`,
 		one: [
 			'A probability from published samples is not a finding in this patient. Image when in doubt; follow local imaging guidance.'
 		],

@@ -76,7 +76,7 @@ describe('mm and count', () => {
 		expect(plain(mmRange([2.98, 3.02]))).toBe('3 mm');
 		expect(plain(diameter(0.3935))).toBe('0.39 mm');
 		expect(plain(diameter(0.4))).toBe('0.40 mm');
-		expect([0.0364, 0.9, 0.00001].map(pValue)).toEqual(['0.036', '0.90', 'under 0.001']);
+		expect([0.0364, 0.9, 0.00001].map(pValue)).toEqual(['p = 0.036', 'p = 0.90', 'p under 0.001']);
 		expect(count(6253)).toBe('6,253');
 		expect(count(0)).toBe('0');
 	});

@@ -89,9 +89,10 @@ export function diameter(width: number): string {
 	return `${hundredths.format(width)}${NO_BREAK}mm`;
 }
 
-/** A p-value: `0.036`; `under 0.001` below that. */
+/** A p-value with its sign: `p = 0.036`; `p under 0.001` below that. */
 export function pValue(p: number): string {
-	return p < 0.001 ? 'under 0.001' : p < 0.1 ? thousandths.format(p) : hundredths.format(p);
+	if (p < 0.001) return 'p under 0.001';
+	return `p = ${p < 0.1 ? thousandths.format(p) : hundredths.format(p)}`;
 }
 
 /** A count with its thousands set apart: `1,234`. */

@@ -43,7 +43,8 @@ export const join = {
 			'Treat as joined: the canals share one exit with at least the probability you ask for.',
 		'treat-as-separate': 'Treat as separate: shape, clean and fill each canal to its own full length.',
 		undecided: 'Undecided: plan as separate, and see below what would settle it.',
-		none: 'No advice: there is one canal, or no evidence on this root.',
+		none: 'No advice: with one canal there is nothing to join.',
+		noEvidence: 'No advice: there is no evidence on this root.',
 		threshold: (percent: string) =>
 			`The line is at ${percent} for a shared exit. It leans towards separate on purpose: shortening a separate canal leaves it unfilled, the worse mistake.`,
 		assumedRule:
@@ -71,6 +72,8 @@ export const join = {
 	assumedNames: { isthmus: 'how often an isthmus is there' } as Record<string, string>,
 	searchNamed: (name: string) => `search by ${name.toLowerCase()}`,
 	notesTitle: 'How this was worked out',
+	borrowed: (count: number) =>
+		`${count} of the nine questions behind this answer ${count === 1 ? 'has' : 'have'} no sample of this root: their figures are borrowed from other roots.`,
 	evidence: (count: number) => `From ${count} ${count === 1 ? 'source' : 'sources'} on this root.`,
 	openEvidence: 'Open the samples',
 	revision: (number: number) => `Table revision ${number}.`,

@@ -87,8 +87,8 @@ export const level = {
 	fillFirst:
 		'Fill the canal with the straighter, wider way to the common end first, its cone to full working length. Shape the shared part through that canal only (common practice).',
 	disagree: (p: string) =>
-		`These measurements contradict each other (p = ${p}): one number is wrong, or something other than a confluence stops the cone. Measure again before you shorten anything.`,
-	agree: (p: string) => `The measurements agree with each other (p = ${p}).`,
+		`These measurements contradict each other (${p}): one number is wrong, or something other than a confluence stops the cone. Measure again before you shorten anything.`,
+	agree: (p: string) => `The measurements agree with each other (${p}).`,
 	published: (range: string) => `Published for this root: ${range} above the apex`,
 	warnings: {
 		'treat-as-separate':

@@ -6,6 +6,9 @@ export const root = {
 	of: (tooth: string) => `of the ${tooth.toLowerCase()}`,
 	evidence: (studies: number, roots: number) =>
 		`From ${count(studies)} ${studies === 1 ? 'source' : 'sources'} and about ${count(roots)} roots.`,
+	fewSamples: (number: number) =>
+		`The headline rests on ${number === 1 ? 'one sample' : `${number} samples`} only: open it before you lean on it.`,
+	seeWhole: 'Look at the whole tooth instead, for which there are samples',
 	noEvidence:
 		'No evidence: no sample of this root answers any question. Every figure here is borrowed from other roots, and no advice is given.',
 	noEvidenceShort: 'No evidence',

@@ -104,7 +104,7 @@ export const operations: Operation[] = [
 		exampleParameters: { id: 'weine-1969' },
 		summary: 'One source with its CSL-JSON',
 		response: sourceSchema,
-		failures: [404]
+		failures: [404, 422]
 	},
 	{
 		method: 'post',

@@ -1,13 +1,18 @@
+import { describeSequence } from '$lib/anatomy/sequence';
 import { confluence as words } from '$lib/strings/confluence';
+import { percent } from '$lib/strings/format';
 import type { ConfluenceDto, ConfluenceRequest } from '$lib/schemas/confluence';
 import type { Root, Tooth } from '$lib/anatomy/teeth';
 import { knownRoot } from '../api/places';
-import { Problem } from '../api/problem';
+import { Problem, type FieldError } from '../api/problem';
 import type { ConfluenceAnswer } from './confluence';
 import { validateQuestion, type ConfluenceQuestion } from './confluenceQuestion';
 import { checkFilters } from './checkFilters';
 import { estimator } from './estimator';
-import type { RootModel } from './types';
+import type { RootAnswer } from './tasks';
+
+/** A share this much above the range, on the screen's whole percents, is worth a caution. */
+const OUTSIDE_BY = 0.01;
 
 /**
  * Answers a request of the estimator: which root it is about, whether it can be asked at all, and the answer in the API's shape.
@@ -17,14 +22,14 @@ export async function confluenceOf(request: ConfluenceRequest): Promise<Confluen
 	const { tooth, root } = placeOf(request);
 	const { canals, orifices, search, threshold, findings } = request;
 	const question: ConfluenceQuestion = { canals, orifices, search, threshold, findings };
-	const mistakes = validateQuestion(question);
+	const mistakes = [...validateQuestion(question), ...unknownPairs(request, root)];
 	if (mistakes.length > 0) throw new Problem(422, 'This cannot be answered as it stands.', mistakes);
 	await checkFilters(request.filters ?? {});
 
 	const current = await estimator();
-	const { model } = await current.root(tooth.id, root.id, request.filters ?? {});
-	const answer = await current.confluence(model, question);
-	return toDto(answer, model, request, current.revision);
+	const known = await current.root(tooth.id, root.id, request.filters ?? {});
+	const answer = await current.confluence(known.model, question);
+	return toDto(answer, known, request, current.revision);
 }
 
 /** The root that a request is about: of a premolar, the number of roots seen decides. */
@@ -47,12 +52,40 @@ function placeOf({ tooth: toothId, root: rootId, rootsSeen }: ConfluenceRequest)
 	return place;
 }
 
+/** With three canals a pair must name two canals of this root; that it names two at all is checked with the question. */
+function unknownPairs({ canals, findings }: ConfluenceRequest, root: Root): FieldError[] {
+	if (canals !== 3) return [];
+	const names = root.canals[3].map(({ id }) => id);
+	return findings.flatMap(({ pair }, index) => {
+		const given = (pair ?? '').split('-').map((name) => name.trim());
+		if (given.length !== 2 || given.every((name) => names.includes(name))) return [];
+		const message = `The canals of this root are called ${names.join(', ')} here.`;
+		return [{ path: `findings.${index}.pair`, message }];
+	});
+}
+
+/** What a reader must know of the evidence before leaning on the answer, the weightiest first. */
+function cautionsOf({ model, named, expectation }: RootAnswer, canals: number): string[] {
+	if (canals < 2) return words.cautions.one;
+	const borrowed = (id: string) =>
+		model.questions.some((question) => question.id === id && question.borrowed);
+	const cautions: string[] = [];
+	// Roots that open with two canals are asked q4, those that divide below the orifice q6.
+	if (model.hasEvidence && borrowed('q4') && borrowed('q6')) cautions.push(words.cautions.joiningNotStudied);
+	const seen = named.filter(({ sequence }) => describeSequence(sequence).fate === 'meet-and-part');
+	const most = Math.max(0, ...seen.map(({ max }) => max));
+	if (most > expectation.fates['meet-and-part'].interval[1] + OUTSIDE_BY)
+		cautions.push(words.cautions.meetAndPartSeen(percent(most)));
+	return [...cautions, ...words.cautions.joining];
+}
+
 function toDto(
 	answer: ConfluenceAnswer,
-	model: RootModel,
+	root: RootAnswer,
 	request: ConfluenceRequest,
 	tableRevision: number
 ): ConfluenceDto {
+	const { model } = root;
 	const sources = [
 		...new Set(model.questions.flatMap(({ evidence }) => evidence.map(({ source }) => source)))
 	].sort();
@@ -80,9 +113,13 @@ function toDto(
 			advice: decision.advice,
 			furtherTestingCanChangeIt: decision.advice === null ? null : decision.furtherTestingCanChangeIt
 		},
-		evidence: { studies: sources.length, sources },
+		evidence: {
+			studies: sources.length,
+			sources,
+			borrowed: model.questions.filter(({ borrowed }) => borrowed).map(({ id }) => id)
+		},
 		assumed: answer.assumed,
 		notes,
-		cautions: request.canals > 1 ? words.cautions.joining : words.cautions.one
+		cautions: cautionsOf(root, request.canals)
 	};
 }

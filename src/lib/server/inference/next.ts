@@ -95,6 +95,7 @@ function prospectOf(inquiry: Inquiry, test: Test): NextTest {
 		(sum, { probability, fates }) => sum + probability * informationBits(fates, before),
 		0
 	);
+	// A divergence is never negative; rounding alone (1e-12, see the tests) can take a sum of nothing below 0.
 	return { test, bits: Math.max(bits, 0), results, ...COSTS[test] };
 }
 

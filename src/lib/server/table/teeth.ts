@@ -1,5 +1,5 @@
 import { QueryTypes } from 'sequelize';
-import { formatToothNumber, positions } from '$lib/anatomy/numbers';
+import { positions } from '$lib/anatomy/numbers';
 import { rootOf, teeth, type Tooth } from '$lib/anatomy/teeth';
 import type { ToothDto, ToothSummary } from '$lib/schemas/teeth';
 import { serverDatabase } from '../db/server';
@@ -51,7 +51,7 @@ function summaryOf(tooth: Tooth, counts: ReadonlyMap<string, PlaceCount>): Tooth
 		id: tooth.id,
 		name: tooth.name,
 		iso: [...tooth.iso],
-		universal: tooth.iso.map((iso) => formatToothNumber(iso, 'universal')),
+		universal: numbers.map(({ universal }) => universal),
 		palmer: {
 			letters: numbers.map(({ palmer }) => palmer),
 			bracket: numbers.map(({ palmerBracket }) => palmerBracket)

@@ -1,4 +1,5 @@
 import { error } from '@sveltejs/kit';
+import { placeAddress } from '$lib/addresses';
 import { rootOf, toothOf } from '$lib/anatomy/teeth';
 import { readFilterFields } from '$lib/filterQuery';
 import { readFilters } from '$lib/server/api/filters';
@@ -38,6 +39,8 @@ export const load: PageServerLoad = async ({ params, url }) => {
 		tooth: { id: tooth.id, name: tooth.name },
 		root: { id: root.id, name: root.name },
 		expectation,
+		wholeAddress:
+			tooth.roots.includes('whole') && root.id !== 'whole' ? placeAddress(tooth.id, 'whole') : null,
 		filters,
 		filterErrors,
 		countries: await countriesOf(tooth.id),
