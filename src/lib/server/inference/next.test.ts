@@ -139,7 +139,9 @@ function statesOf({ model, question }: Case) {
 	const result = (test: Test) => clear.find((one) => one.test === test)?.result;
 	// 16 : 1, 7 : 1, then 1 : 4.75 and 1 : 3: two files say more only where they are positive against a negative contact.
 	const weaker =
-		result('file-contact') === 'negative' && result('two-files') === 'positive' ? 'file-contact' : 'two-files';
+		result('file-contact') === 'negative' && result('two-files') === 'positive'
+			? 'file-contact'
+			: 'two-files';
 	const both = RIVALS.every((test) => result(test));
 	const counted = clear.filter(({ test }) => !both || test !== weaker);
 	return sequencesOf(model)
