@@ -15,7 +15,7 @@ import type { FateProbabilities } from './posterior';
 import type { RootModel } from './types';
 
 /** What becomes of the canals of a root, and whether one is still hidden. */
-interface ConfluenceOutlook {
+export interface ConfluenceOutlook {
 	/** 'one-canal' only where a width of 1 is possible. */
 	fates: Partial<Record<Fate, Estimate>>;
 	/** More canals than were negotiated; null for three, where the table cannot say whether a fourth is there. */
@@ -45,7 +45,7 @@ export interface ConfluenceAnswer {
 	decision: Decision;
 }
 
-function outlookOf({ leaves, question }: Inquiry, estimate: Estimator): ConfluenceOutlook {
+function outlookOf(leaves: Leaf[], question: ConfluenceQuestion, estimate: Estimator): ConfluenceOutlook {
 	const fates = fatesOf(leaves).map((fate) => [fate, estimate((leaf) => leafFacts(leaf).fate === fate)]);
 	return {
 		fates: Object.fromEntries(fates) as ConfluenceOutlook['fates'],
@@ -55,10 +55,10 @@ function outlookOf({ leaves, question }: Inquiry, estimate: Estimator): Confluen
 }
 
 function pictureOf(inquiry: Inquiry, estimate: Estimator): ConfluencePicture {
-	const { leaves } = inquiry;
+	const { leaves, question } = inquiry;
 	const counts = [...new Set(leaves.map((leaf) => leafFacts(leaf).exits))].sort((a, b) => a - b);
 	return {
-		...outlookOf(inquiry, estimate),
+		...outlookOf(leaves, question, estimate),
 		exits: counts.map((count) => ({ count, ...estimate((leaf) => leafFacts(leaf).exits === count) })),
 		sequences: leaves.map((sequence) => ({ sequence, ...estimate((leaf) => leaf === sequence) }))
 	};
@@ -72,22 +72,46 @@ function assumedOf({ likelihoods, isthmus, search }: Evidence, question: Conflue
 	return assumed;
 }
 
+/** What of an inquiry does not depend on its findings. */
+function contextOf(characteristics: Characteristics, question: ConfluenceQuestion, model: RootModel) {
+	return { isthmus: isthmusOf(model, characteristics), search: searchOf(characteristics, question) };
+}
+
+/**
+ * The outlook of a question without its findings: the same for every set of findings in the same root, so that the
+ * server works it out once while findings are entered one after the other.
+ * @param model the root under the person's filters
+ * @param question only its canals, orifices and search count
+ * @throws RangeError as answerConfluence
+ */
+export function priorOutlook(
+	model: RootModel,
+	characteristics: Characteristics,
+	question: ConfluenceQuestion
+): ConfluenceOutlook {
+	const leaves = possibleLeaves(question);
+	const evidence = combine([], contextOf(characteristics, question, model));
+	return outlookOf(leaves, question, estimatorOf(model, leaves, expectedLeaves(model), evidence));
+}
+
 /**
  * Answers a question about one root (inference, sections 3 and 4): exact posterior means, intervals, the fates
  * after each finding, what to test next, and advice. Deterministic; the order of findings changes only `steps`.
  * @param model the root under the person's filters; one without evidence is answered, without advice
  * @param characteristics those of the root (characteristicsFor)
  * @param question one that validateQuestion found nothing wrong with
+ * @param knownPrior what priorOutlook answers to the same question, where it is known already
  * @throws RangeError for a question no sequence of the root fits, or a test the table has no characteristics of
  */
 export function answerConfluence(
 	model: RootModel,
 	characteristics: Characteristics,
-	question: ConfluenceQuestion
+	question: ConfluenceQuestion,
+	knownPrior?: ConfluenceOutlook
 ): ConfluenceAnswer {
 	const leaves = possibleLeaves(question);
 	const priors = expectedLeaves(model);
-	const context = { isthmus: isthmusOf(model, characteristics), search: searchOf(characteristics, question) };
+	const context = contextOf(characteristics, question, model);
 	const made = likelihoodsOf(question.findings, characteristics, context.isthmus);
 	const clear = (likelihood: FindingLikelihood | null) => likelihood !== null;
 	const inquiry: Inquiry = {
@@ -105,9 +129,12 @@ export function answerConfluence(
 	}
 	const posterior = estimatorOf(model, leaves, priors, evidence);
 	const prior =
-		inquiry.entered.length > 0 ? estimatorOf(model, leaves, priors, combine([], context)) : posterior;
+		knownPrior ??
+		(inquiry.entered.length > 0
+			? priorOutlook(model, characteristics, question)
+			: outlookOf(leaves, question, posterior));
 	return {
-		prior: outlookOf(inquiry, prior),
+		prior,
 		posterior: pictureOf(inquiry, posterior),
 		steps: question.findings.map((finding, index) => {
 			const soFar = combine(made.slice(0, index + 1).filter(clear), context);

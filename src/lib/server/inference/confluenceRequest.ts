@@ -24,11 +24,12 @@ export async function confluenceOf(request: ConfluenceRequest): Promise<Confluen
 	const question: ConfluenceQuestion = { canals, orifices, search, threshold, findings };
 	const mistakes = [...validateQuestion(question), ...unknownPairs(request, root)];
 	if (mistakes.length > 0) throw new Problem(422, 'This cannot be answered as it stands.', mistakes);
-	await checkFilters(request.filters ?? {});
+	const filters = request.filters ?? {};
+	await checkFilters(filters);
 
 	const current = await estimator();
-	const known = await current.root(tooth.id, root.id, request.filters ?? {});
-	const answer = await current.confluence(known.model, question);
+	const known = await current.root(tooth.id, root.id, filters);
+	const answer = await current.confluence(tooth.id, root.id, filters, question);
 	return toDto(answer, known, request, current.revision);
 }
 

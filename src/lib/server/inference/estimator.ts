@@ -7,12 +7,12 @@ import { serverDatabase } from '../db/server';
 import { readSnapshot, tableRevision, type TableSnapshot } from '../table/snapshot';
 import { ANSWERED_ROOTS } from './borrowing';
 import { canonical, remember } from './cache';
-import type { ConfluenceAnswer } from './confluence';
+import type { ConfluenceAnswer, ConfluenceOutlook } from './confluence';
 import type { ConfluenceQuestion } from './confluenceQuestion';
 import { sumCoverage, type RootCoverage, type TableCoverage } from './coverage';
 import { OneByOne } from './oneByOne';
 import { createTasks, type RootAnswer, type Tasks, type ToothAnswer } from './tasks';
-import type { Filters, RootModel, Study } from './types';
+import type { Filters, Study } from './types';
 
 /** The second build puts the worker here, beside kit's own server. */
 const WORKER_FILE = 'build/entries/inferenceWorker.js';
@@ -22,6 +22,8 @@ const MOST_WAITING = 500;
 const MOST_ROOTS = 300;
 /** Coverages kept: some 10 kB each. */
 const MOST_COVERAGES = 300;
+/** Outlooks without findings kept: under 1 kB each. */
+const MOST_OUTLOOKS = 2000;
 /** Coverages that may wait to be worked out for nobody in particular. */
 const MOST_IN_BACKGROUND = 50;
 const WORKER_IDLE_MS = 5 * 60 * 1000;
@@ -37,6 +39,7 @@ class Estimator {
 	readonly #workers: Piscina | null = null;
 	// Promises, not results: a question asked twice at once is worked out once.
 	readonly #roots = new LRUCache<string, Promise<RootAnswer>>({ max: MOST_ROOTS });
+	readonly #outlooks = new LRUCache<string, Promise<ConfluenceOutlook>>({ max: MOST_OUTLOOKS });
 	readonly #teeth = new Map<string, Promise<ToothAnswer>>();
 	readonly #coverages = new LRUCache<string, Promise<RootCoverage>>({ max: MOST_COVERAGES });
 	readonly #knownCoverages = new LRUCache<string, RootCoverage>({ max: MOST_COVERAGES });
@@ -118,8 +121,19 @@ class Estimator {
 		return remember(this.#teeth, tooth, () => this.#run('tooth', [tooth]));
 	}
 
-	confluence(model: RootModel, question: ConfluenceQuestion): Promise<ConfluenceAnswer> {
-		return this.#run('confluence', [model, question]);
+	/** Answers a question about a root; what its findings do not move is worked out once for all of them. */
+	async confluence(
+		tooth: string,
+		root: string,
+		filters: Filters,
+		question: ConfluenceQuestion
+	): Promise<ConfluenceAnswer> {
+		const { model } = await this.root(tooth, root, filters);
+		if (question.findings.length === 0) return this.#run('confluence', [model, question]);
+		const { canals, orifices, search } = question;
+		const key = JSON.stringify([tooth, root, canonical(filters), canals, orifices, search]);
+		const prior = await remember(this.#outlooks, key, () => this.#run('outlook', [model, question]));
+		return this.#run('confluence', [model, question, prior]);
 	}
 
 	pool(studies: Study[], level?: number) {

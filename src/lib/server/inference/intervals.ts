@@ -221,7 +221,9 @@ function weightDraws(model: RootModel, evidence: Evidence, leaves: Leaf[], state
 
 /** Draw by draw sums. */
 function sumOf(terms: Float64Array[]): Float64Array {
-	const sum = new Float64Array(SOBOL_POINTS);
-	for (const term of terms) for (let i = 0; i < SOBOL_POINTS; i++) sum[i] += term[i];
+	if (terms.length === 0) return new Float64Array(SOBOL_POINTS);
+	const [first, ...others] = terms;
+	const sum = first.slice();
+	for (const term of others) for (let i = 0; i < SOBOL_POINTS; i++) sum[i] += term[i];
 	return sum;
 }

@@ -1,6 +1,6 @@
 import { gatherLenders } from './borrowing';
 import { characteristicsFor } from './characteristics';
-import { answerConfluence, type ConfluenceAnswer } from './confluence';
+import { answerConfluence, priorOutlook, type ConfluenceAnswer, type ConfluenceOutlook } from './confluence';
 import type { ConfluenceQuestion } from './confluenceQuestion';
 import { rootCoverage, type RootCoverage } from './coverage';
 import { gatherCounts, type CountSample } from './counts';
@@ -48,7 +48,9 @@ export interface Tasks {
 	root(tooth: string, root: string, filters: Filters): RootAnswer;
 	coverage(tooth: string, root: string, filters: Filters): RootCoverage;
 	tooth(tooth: string): ToothAnswer;
-	confluence(model: RootModel, question: ConfluenceQuestion): ConfluenceAnswer;
+	/** The part of an answer that its findings do not move. */
+	outlook(model: RootModel, question: ConfluenceQuestion): ConfluenceOutlook;
+	confluence(model: RootModel, question: ConfluenceQuestion, prior?: ConfluenceOutlook): ConfluenceAnswer;
 	pool(studies: Study[], level: number | undefined): Omit<Pooled, 'grid'>;
 }
 
@@ -71,6 +73,8 @@ export function createTasks(table: {
 			const { grid: _, ...figures } = pool(studies);
 			return { id, evidence: studies, ...figures };
 		});
+	const characteristicsOf = ({ tooth, root }: RootModel) =>
+		characteristicsFor(table.characteristics, tooth, root);
 
 	return {
 		root(tooth, root, filters) {
@@ -88,8 +92,9 @@ export function createTasks(table: {
 			canalCounts: gatherCounts(indexed(), tooth, 'canal-count', {}),
 			features: features(tooth, null, {})
 		}),
-		confluence: (model, question) =>
-			answerConfluence(model, characteristicsFor(table.characteristics, model.tooth, model.root), question),
+		outlook: (model, question) => priorOutlook(model, characteristicsOf(model), question),
+		confluence: (model, question, prior) =>
+			answerConfluence(model, characteristicsOf(model), question, prior),
 		pool(studies, level) {
 			const { grid: _, ...figures } = pool(studies, { level });
 			return figures;
