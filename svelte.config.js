@@ -6,6 +6,8 @@ const config = {
 	preprocess: vitePreprocess(),
 	kit: {
 		adapter: adapter(),
+		// The one style sheet (5 kB packed) travels in the page: a round trip less before a phone draws anything.
+		inlineStyleThreshold: 50_000,
 		typescript: {
 			// The tools' own settings are checked and linted as everything else is.
 			config: (config) => ({

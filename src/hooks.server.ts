@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { HandleServerError, ServerInit } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
 import { apiProblems } from '$lib/server/hooks/apiProblems';
+import { compress } from '$lib/server/hooks/compress';
 import { originGuard } from '$lib/server/hooks/originGuard';
 import { preferences } from '$lib/server/hooks/preferences';
 import { rateLimit } from '$lib/server/hooks/rateLimit';
@@ -12,7 +13,15 @@ import { startUp } from '$lib/server/startUp';
 
 export const init: ServerInit = startUp;
 
-export const handle = sequence(requestLog, securityHeaders, apiProblems, rateLimit, originGuard, preferences);
+export const handle = sequence(
+	requestLog,
+	compress,
+	securityHeaders,
+	apiProblems,
+	rateLimit,
+	originGuard,
+	preferences
+);
 
 export const handleError: HandleServerError = ({ error, event, status, message }) => {
 	const id = event.locals.requestId ?? randomUUID();

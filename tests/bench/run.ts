@@ -13,10 +13,16 @@ import { openDatabase } from '../../src/lib/server/db/connection';
 import { defineLiterature } from '../../src/lib/server/db/models/literature';
 import { defineSupplements } from '../../src/lib/server/db/models/supplements';
 import { readSnapshot, type TableSnapshot } from '../../src/lib/server/table/snapshot';
+import { lighthouseMarks } from './screens';
 import { MeasuredServer } from './server';
 
 const RICHEST = { tooth: 'maxillary-first-molar', root: 'MB' };
 const ROOT_PAGE = `/teeth/${RICHEST.tooth}/${RICHEST.root}`;
+const SCREENS = {
+	tooth: `/teeth/${RICHEST.tooth}`,
+	root: ROOT_PAGE,
+	estimator: `${ROOT_PAGE}/join?canals=2&cone-mark=positive`
+};
 const LOAD_SECONDS = 5;
 const CONCURRENT_ESTIMATES = 20;
 const COLD_AT_ONCE = 100;
@@ -149,6 +155,7 @@ try {
 	await database.close();
 	await rates(server);
 	await coldAtOnce(server);
+	await lighthouseMarks(server.address, SCREENS, print);
 } finally {
 	await server.stop();
 }
