@@ -7,12 +7,25 @@ import { preferences } from '$lib/server/hooks/preferences';
 import { rateLimit } from '$lib/server/hooks/rateLimit';
 import { requestLog } from '$lib/server/hooks/requestLog';
 import { securityHeaders } from '$lib/server/hooks/securityHeaders';
+import { session } from '$lib/server/hooks/session';
+import { signInAgain } from '$lib/server/hooks/signInAgain';
+import { tableAccess } from '$lib/server/hooks/tableAccess';
 import { log } from '$lib/server/log';
 import { startUp } from '$lib/server/startUp';
 
 export const init: ServerInit = startUp;
 
-export const handle = sequence(requestLog, securityHeaders, apiProblems, rateLimit, originGuard, preferences);
+export const handle = sequence(
+	requestLog,
+	securityHeaders,
+	apiProblems,
+	rateLimit,
+	originGuard,
+	session,
+	tableAccess,
+	preferences,
+	signInAgain
+);
 
 export const handleError: HandleServerError = ({ error, event, status, message }) => {
 	const id = event.locals.requestId ?? randomUUID();
