@@ -1,4 +1,6 @@
 import type { Preferences } from '$lib/schemas/preferences';
+import type { Role } from '$lib/schemas/terms';
+import type { SignedIn } from '$lib/server/people/roles';
 
 declare global {
 	namespace App {
@@ -10,6 +12,16 @@ declare global {
 		interface Locals {
 			requestId: string;
 			preferences: Preferences;
+			/** Who makes the request; null for a visitor. */
+			user: SignedIn | null;
+			/** Set by requireUser when a form came without a sign-in, so that what was typed is carried through it. */
+			signInNeeded?: boolean;
+		}
+		interface PageData {
+			/** Who looks at the page; null for a visitor. */
+			viewer: { name: string; email: string; roles: Role[] } | null;
+			/** The installation's name, empty if it has none. */
+			installation: string;
 		}
 	}
 }

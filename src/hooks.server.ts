@@ -8,6 +8,9 @@ import { preferences } from '$lib/server/hooks/preferences';
 import { rateLimit } from '$lib/server/hooks/rateLimit';
 import { requestLog } from '$lib/server/hooks/requestLog';
 import { securityHeaders } from '$lib/server/hooks/securityHeaders';
+import { session } from '$lib/server/hooks/session';
+import { signInAgain } from '$lib/server/hooks/signInAgain';
+import { tableAccess } from '$lib/server/hooks/tableAccess';
 import { log } from '$lib/server/log';
 import { startUp } from '$lib/server/startUp';
 
@@ -15,12 +18,22 @@ export const init: ServerInit = startUp;
 
 export const handle = sequence(
 	requestLog,
+<<<<<<< HEAD
 	compress,
+=======
+>>>>>>> da55fb6
 	securityHeaders,
 	apiProblems,
 	rateLimit,
 	originGuard,
+<<<<<<< HEAD
 	preferences
+=======
+	session,
+	tableAccess,
+	preferences,
+	signInAgain
+>>>>>>> da55fb6
 );
 
 export const handleError: HandleServerError = ({ error, event, status, message }) => {

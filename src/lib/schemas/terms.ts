@@ -39,3 +39,68 @@ export const SEARCHES = ['unaided', 'loupes', 'microscope', 'microscope-troughin
 export const MEASUREMENT_KINDS = ['cone-mark', 'cone-shortfall', 'file-contact', 'cbct'] as const;
 /** How far the second canal was shaped. */
 export const SHAPED_TO = ['full', 'confluence', 'unknown'] as const;
+
+/** What a person may be; they may be several. A visitor is none. */
+export const ROLES = ['student', 'dentist', 'educator', 'administrator'] as const;
+export type Role = (typeof ROLES)[number];
+
+/** What a token of the API may be used for; never for more than its owner may. */
+export const SCOPES = ['account:read', 'table:read', 'table:write', 'people:read', 'audit:read'] as const;
+export type Scope = (typeof SCOPES)[number];
+
+/** Days a token of the API may live. */
+export const TOKEN_DAYS = [7, 30, 90, 365] as const;
+
+/** Code points of a password, at least: NIST SP 800-63B-4, 3.1.1.2, for a password that is the only factor. */
+export const PASSWORD_LEAST = 15;
+/** And at most: NIST asks for 64 or more; an end, because every character is worked on. */
+export const PASSWORD_MOST = 256;
+
+/** Everything the audit log records. */
+export const AUDIT_ACTIONS = [
+	'installation set up',
+	'signed in',
+	'sign-in refused',
+	'signed out',
+	'device signed out',
+	'all devices signed out',
+	'invited',
+	'invitation sent again',
+	'invitation revoked',
+	'invitation accepted',
+	'name changed',
+	'password changed',
+	'reset asked',
+	'reset link made',
+	'password reset',
+	'e-mail change asked',
+	'e-mail changed',
+	'second factor on',
+	'second factor off',
+	'recovery code used',
+	'recovery codes renewed',
+	'token made',
+	'token revoked',
+	'roles changed',
+	'deactivated',
+	'reactivated',
+	'settings changed',
+	'audit exported',
+	'mail retried',
+	'mail dropped'
+] as const;
+export type AuditAction = (typeof AUDIT_ACTIONS)[number];
+
+export const MAIL_KINDS = [
+	'invitation',
+	'reset',
+	'e-mail change',
+	'e-mail change notice',
+	'review asked',
+	'entry returned',
+	'entry published'
+] as const;
+export type MailKind = (typeof MAIL_KINDS)[number];
+
+export const MAIL_STATES = ['waiting', 'sending', 'sent', 'failed', 'dropped'] as const;
+export type MailState = (typeof MAIL_STATES)[number];

@@ -3,6 +3,8 @@ import type { Sequelize } from 'sequelize';
 import { openDatabase } from './connection';
 import { migrate } from './migrate';
 import { defineLiterature } from './models/literature';
+import { defineMail } from './models/mail';
+import { definePeople } from './models/people';
 import { defineSupplements } from './models/supplements';
 
 /** Name of the database file inside DATA_DIR. */
@@ -22,6 +24,8 @@ export async function connect(dataDir: string): Promise<Sequelize> {
 	const sequelize = openDatabase(file);
 	defineLiterature(sequelize);
 	defineSupplements(sequelize);
+	definePeople(sequelize);
+	defineMail(sequelize);
 	return sequelize;
 }
 
