@@ -18,22 +18,15 @@ export const init: ServerInit = startUp;
 
 export const handle = sequence(
 	requestLog,
-<<<<<<< HEAD
 	compress,
-=======
->>>>>>> da55fb6
 	securityHeaders,
 	apiProblems,
 	rateLimit,
 	originGuard,
-<<<<<<< HEAD
-	preferences
-=======
 	session,
 	tableAccess,
 	preferences,
 	signInAgain
->>>>>>> da55fb6
 );
 
 export const handleError: HandleServerError = ({ error, event, status, message }) => {
