@@ -10,7 +10,7 @@ import { combine, isthmusOf, likelihoodsOf, searchOf } from './likelihoods';
 import type { Evidence, FindingLikelihood, Superseded } from './likelihoods';
 import { decide, rankNext } from './next';
 import type { Decision, NextTest } from './next';
-import { exactWeights, expectedLeaves, fateShares, fatesOf } from './posterior';
+import { exactWeights, expectedLeaves, fatesOf } from './posterior';
 import type { FateProbabilities } from './posterior';
 import type { RootModel } from './types';
 
@@ -30,13 +30,23 @@ interface ConfluencePicture extends ConfluenceOutlook {
 	sequences: ({ sequence: Leaf } & Estimate)[];
 }
 
+/** One finding of the account. */
+interface Step {
+	finding: Finding;
+	/** Fates after this finding and those before it. */
+	fates: FateProbabilities;
+	intervals: Partial<Record<Fate, [number, number]>>;
+	/** How often this result is expected, and what that rests on; null for an unclear one, which says nothing. */
+	expected: { meet: number; never: number; assumed: boolean; sources: string[] } | null;
+}
+
 /** The answer to a question about one root. */
 export interface ConfluenceAnswer {
 	/** The same question (canals, orifices, search) without its findings. */
 	prior: ConfluenceOutlook;
 	posterior: ConfluencePicture;
-	/** Fates after each finding, in the order given. */
-	steps: { finding: Finding; fates: FateProbabilities }[];
+	/** The account: what each finding left, in the order given. */
+	steps: Step[];
 	/** The one of file contact and two files that did not count, since the other says more of the same mechanism. */
 	superseded: Superseded | null;
 	/** Findings (and 'isthmus', and the search) used whose characteristics are assumed, not published. */
@@ -62,6 +72,14 @@ function pictureOf(inquiry: Inquiry, estimate: Estimator): ConfluencePicture {
 		exits: counts.map((count) => ({ count, ...estimate((leaf) => leafFacts(leaf).exits === count) })),
 		sequences: leaves.map((sequence) => ({ sequence, ...estimate((leaf) => leaf === sequence) }))
 	};
+}
+
+/** What a result is expected to show where canals meet and where they never do. */
+function expectedOf(likelihood: FindingLikelihood | null): Step['expected'] {
+	if (!likelihood) return null;
+	const { meet, never, neverIsthmus, expected, assumed } = likelihood;
+	const sources = [meet, never, neverIsthmus].flatMap((beta) => beta?.sourceIds ?? []);
+	return { ...expected, assumed, sources: [...new Set(sources)] };
 }
 
 /** What of the evidence rests on assumed characteristics. */
@@ -106,12 +124,29 @@ export function answerConfluence(
 	const posterior = estimatorOf(model, leaves, priors, evidence);
 	const prior =
 		inquiry.entered.length > 0 ? estimatorOf(model, leaves, priors, combine([], context)) : posterior;
+	/** The estimator after the first findings; an unclear one adds nothing, so nothing is worked out for it. */
+	const after = new Map([
+		[0, prior],
+		[inquiry.entered.length, posterior]
+	]);
+	const estimatorAfter = (clearOnes: FindingLikelihood[]): Estimator => {
+		const known =
+			after.get(clearOnes.length) ?? estimatorOf(model, leaves, priors, combine(clearOnes, context));
+		after.set(clearOnes.length, known);
+		return known;
+	};
 	return {
 		prior: outlookOf(inquiry, prior),
 		posterior: pictureOf(inquiry, posterior),
 		steps: question.findings.map((finding, index) => {
-			const soFar = combine(made.slice(0, index + 1).filter(clear), context);
-			return { finding, fates: fateShares(leaves, exactWeights(leaves, priors, soFar)) };
+			const outlook = outlookOf(inquiry, estimatorAfter(made.slice(0, index + 1).filter(clear)));
+			const each = Object.entries(outlook.fates);
+			return {
+				finding,
+				fates: Object.fromEntries(each.map(([fate, { mean }]) => [fate, mean])),
+				intervals: Object.fromEntries(each.map(([fate, { interval }]) => [fate, interval])),
+				expected: expectedOf(made[index])
+			};
 		}),
 		superseded: evidence.superseded,
 		assumed: assumedOf(evidence, question),

@@ -100,7 +100,7 @@ function toDto(
 		tableRevision,
 		prior: { fates: answer.prior.fates, anotherCanal: answer.prior.anotherCanal },
 		posterior: answer.posterior,
-		steps: answer.steps.map(({ finding, fates }) => ({ finding, fates, note: supersededNote(finding.test) })),
+		steps: answer.steps.map((step) => ({ ...step, note: supersededNote(step.finding.test) })),
 		next: answer.next.map(({ test, bits, results, effort, risk }) => ({
 			test,
 			bits,
