@@ -39,3 +39,11 @@ export const SEARCHES = ['unaided', 'loupes', 'microscope', 'microscope-troughin
 export const MEASUREMENT_KINDS = ['cone-mark', 'cone-shortfall', 'file-contact', 'cbct'] as const;
 /** How far the second canal was shaped. */
 export const SHAPED_TO = ['full', 'confluence', 'unknown'] as const;
+
+/**
+ * Probability of one shared exit from which canals are treated as joined, unless somebody asks for another. High, because shortening
+ * a separate canal leaves it unfilled, the worse mistake (inference, section 4).
+ */
+export const USUAL_THRESHOLD = 0.9;
+/** What screens offer; the API takes up to 0.999. */
+export const THRESHOLD_RANGE = [0.5, 0.99] as const;
