@@ -1,5 +1,6 @@
 import { RESULTS, TESTS } from '$lib/schemas/terms';
 import { readFilterFields, type FilterFields } from '$lib/filterQuery';
+import { confluence as words } from '$lib/strings/confluence';
 import { levelFields, readLevel, type LevelState } from './levelState';
 
 /** The question of the page as its address writes it. Values are as typed: the schema says what is wrong with them. */
@@ -19,10 +20,27 @@ export interface JoinState {
 	filters: FilterFields;
 }
 
-/** Names that only a form without JavaScript sends: the order of its findings, the line in percent, a button pressed. */
-const FORM_FIELDS = ['order', 'line', 'do'] as const;
+/** The probability from which canals are treated as joined, and where it comes from. */
+export interface DecisionLine {
+	value: number;
+	from: 'address' | 'device' | 'usual';
+}
+/** The line that holds while the address gives none. */
+export type UnsetLine = DecisionLine & { from: 'device' | 'usual' };
 
 type Test = (typeof TESTS)[number];
+type Result = (typeof RESULTS)[number];
+
+/** A finding in words, such as "Cone mark: positive (MB-ML)". */
+export function findingName({ test, result, pair }: { test: Test; result: Result; pair?: string }): string {
+	return `${words.tests[test].name}: ${words.results[result].toLowerCase()}${pair ? ` (${pair})` : ''}`;
+}
+
+/** Id of the form of the findings; buttons elsewhere on the page belong to it by this. */
+export const JOIN_FORM = 'join-form';
+
+/** Names that only a form without JavaScript sends: the order of its findings, the line in percent, a button pressed. */
+const FORM_FIELDS = ['order', 'line', 'do'] as const;
 
 const isTest = (name: string): name is Test => (TESTS as readonly string[]).includes(name);
 
@@ -121,7 +139,7 @@ function withMoved(state: JoinState, test: Test, by: -1 | 1): JoinState {
 }
 
 /** What a button of the page does: `up:draw`, `down:draw`, `remove:draw`, or a result to enter, `positive:draw`. */
-export type JoinAction = `${'up' | 'down' | 'remove' | (typeof RESULTS)[number]}:${Test}`;
+export type JoinAction = `${'up' | 'down' | 'remove' | Result}:${Test}`;
 
 /** The state after a button was pressed; the same for anything that is none of its actions. */
 export function withAction(state: JoinState, action: string): JoinState {
