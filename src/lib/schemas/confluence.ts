@@ -43,11 +43,14 @@ export type ConfluenceRequest = z.infer<typeof confluenceRequestSchema>;
 const fate = z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']);
 const fateMeans = z.partialRecord(fate, probabilitySchema);
 
+const meetSchema = estimateSchema.describe('The canals come together anywhere, whatever they do afterwards');
+
 export const confluenceResponseSchema = z.object({
 	tableRevision: z.number().int(),
-	prior: z.object({ fates: fatesSchema, anotherCanal: estimateSchema.nullable() }),
+	prior: z.object({ fates: fatesSchema, meet: meetSchema, anotherCanal: estimateSchema.nullable() }),
 	posterior: z.object({
 		fates: fatesSchema,
+		meet: meetSchema,
 		anotherCanal: estimateSchema.nullable().describe('Null with three canals: the table cannot say'),
 		exits: z.array(estimateSchema.extend({ count: z.number().int() })),
 		sequences: z.array(estimateSchema.extend({ sequence: z.string() }))

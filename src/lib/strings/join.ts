@@ -44,7 +44,7 @@ export const join = {
 	status: (advice: string, fates: string) => `${advice}. ${fates}.`,
 	statusFate: (fate: string, value: string, range: string) => `${fate}: ${value}, ${range}`,
 	meet: 'The canals meet somewhere',
-	before: (value: string) => `Before these findings: ${value}.`,
+	before: (value: string, range: string) => `Before these findings: ${value} (${range}).`,
 	fates: 'What becomes of the canals',
 	drawing: 'Sequences still possible',
 	drawingLabel: (place: string) => `Canal sequences still possible: ${place}`,

@@ -8,7 +8,6 @@ import { join as words } from '$lib/strings/join';
 import { level as levelWords } from '$lib/strings/level';
 import { toFateList } from '$lib/components/root/fateList';
 import { adviceOf } from './advice';
-import { meetProbability } from './meet';
 import { findingName, type DecisionLine, type JoinState } from './state';
 
 /** What the text for the record is made from. */
@@ -35,6 +34,9 @@ export function assumedName(id: string): string {
 	const search = SEARCHES.find((one) => `search-${one}` === id);
 	return search ? words.searchNamed(confluence.searches[search]) : (words.assumedNames[id] ?? id);
 }
+
+const figure = ({ mean, interval }: { mean: number; interval: [number, number] }) =>
+	`${percent(mean)} (${range(interval)})`;
 
 const searchName = (search: string | undefined) =>
 	confluence.searches[SEARCHES.find((one) => one === search) ?? 'unaided'];
@@ -66,17 +68,15 @@ function findingLines({ steps }: ConfluenceDto): string[] {
 
 function estimateLines(answer: ConfluenceDto): string[] {
 	const { posterior, prior, steps } = answer;
-	const before = steps.length > 0 ? `, ${words.record.before(percent(meetProbability(prior.fates)))}` : '';
+	const before = steps.length > 0 ? `, ${words.record.before(figure(prior.meet))}` : '';
 	const { anotherCanal } = posterior;
 	return [
 		words.record.estimate,
-		`${words.meet}: ${percent(meetProbability(posterior.fates))}${before}`,
+		`${words.meet}: ${figure(posterior.meet)}${before}`,
 		...toFateList(posterior.fates).map(
-			({ fate, mean, interval }) => `- ${drawing.fates[fate]}: ${percent(mean)} (${range(interval)})`
+			({ fate, mean, interval }) => `- ${drawing.fates[fate]}: ${figure({ mean, interval })}`
 		),
-		anotherCanal
-			? `${words.hidden}: ${percent(anotherCanal.mean)} (${range(anotherCanal.interval)})`
-			: words.hiddenUnknown
+		anotherCanal ? `${words.hidden}: ${figure(anotherCanal)}` : words.hiddenUnknown
 	];
 }
 

@@ -5,10 +5,10 @@ import { page } from '$app/state';
 export interface Timeline {
 	readonly canUndo: boolean;
 	readonly canRedo: boolean;
-	undo(): void;
-	redo(): void;
+	undo: () => void;
+	redo: () => void;
 	/** Goes to the address of a new state, in a new entry of the history or in place of this one. */
-	go(address: string, inPlace?: boolean): Promise<void>;
+	go: (address: string, inPlace?: boolean) => Promise<void>;
 }
 
 /**

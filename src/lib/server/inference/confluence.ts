@@ -18,6 +18,8 @@ import type { RootModel } from './types';
 interface ConfluenceOutlook {
 	/** 'one-canal' only where a width of 1 is possible. */
 	fates: Partial<Record<Fate, Estimate>>;
+	/** The canals come together anywhere, whatever they do afterwards. */
+	meet: Estimate;
 	/** More canals than were negotiated; null for three, where the table cannot say whether a fourth is there. */
 	anotherCanal: Estimate | null;
 }
@@ -59,6 +61,7 @@ function outlookOf({ leaves, question }: Inquiry, estimate: Estimator): Confluen
 	const fates = fatesOf(leaves).map((fate) => [fate, estimate((leaf) => leafFacts(leaf).fate === fate)]);
 	return {
 		fates: Object.fromEntries(fates) as ConfluenceOutlook['fates'],
+		meet: estimate((leaf) => leafFacts(leaf).stepsDown),
 		anotherCanal:
 			question.canals < MOST_CANALS ? estimate((leaf) => leafFacts(leaf).width > question.canals) : null
 	};

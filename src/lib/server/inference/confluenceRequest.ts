@@ -98,7 +98,7 @@ function toDto(
 	if (!model.hasEvidence) notes.push(words.notes.noEvidence);
 	return {
 		tableRevision,
-		prior: { fates: answer.prior.fates, anotherCanal: answer.prior.anotherCanal },
+		prior: answer.prior,
 		posterior: answer.posterior,
 		steps: answer.steps.map((step) => ({ ...step, note: supersededNote(step.finding.test) })),
 		next: answer.next.map(({ test, bits, results, effort, risk }) => ({

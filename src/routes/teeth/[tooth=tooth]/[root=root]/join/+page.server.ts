@@ -7,7 +7,8 @@ import {
 	readState,
 	writeState,
 	type DecisionLine,
-	type JoinState
+	type JoinState,
+	type UnsetLine
 } from '$lib/components/join/state';
 import { confluenceRequestSchema, type ConfluenceDto } from '$lib/schemas/confluence';
 import { FILTER_FIELDS, USUAL_THRESHOLD } from '$lib/schemas/terms';
