@@ -114,7 +114,9 @@ export const join = {
 	searchNamed: (name: string) => `search by ${name.toLowerCase()}`,
 	notesTitle: 'How this was worked out',
 	borrowed: (count: number) =>
-		`${count} of the nine questions behind this answer ${count === 1 ? 'has' : 'have'} no sample of this root: their figures are borrowed from other roots.`,
+		count === 1
+			? 'One of the nine questions behind this answer has no sample of this root: its figures are borrowed from other roots.'
+			: `${count} of the nine questions behind this answer have no sample of this root: their figures are borrowed from other roots.`,
 	evidence: (count: number) => `From ${count} ${count === 1 ? 'source' : 'sources'} on this root.`,
 	openEvidence: 'Open the samples',
 	revision: (number: number) => `Table revision ${number}.`,

@@ -64,7 +64,7 @@ The line is at 90 % for a shared exit, the usual one.
 
 What it rests on
 From 12 sources on this root.
-1 of the nine questions behind this answer has no sample of this root: their figures are borrowed from other roots.
+One of the nine questions behind this answer has no sample of this root: its figures are borrowed from other roots.
 No accuracy was ever published for: cone mark, search by microscope, no troughing. The figures used for them are assumptions of the editors.
 Findings are taken as independent.
 

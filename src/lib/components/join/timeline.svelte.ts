@@ -20,6 +20,8 @@ export function createTimeline(): Timeline {
 	let furthest = $state(0);
 	/** Steps asked of the browser that it has not made yet. */
 	let underWay = 0;
+	/** A new entry is on its way: what replaces it before it is there has to become that entry. */
+	let pushing = false;
 	let stay: { focused: Element | null; top: number } | null = null;
 
 	beforeNavigate(({ type, from, to }) => {
@@ -30,6 +32,7 @@ export function createTimeline(): Timeline {
 		// Anything but a step in the history cuts off what was undone.
 		furthest = type === 'popstate' ? Math.max(furthest, at) : at;
 		underWay = 0;
+		pushing = false;
 		if (!stay) return;
 		// Kit would scroll to where this entry was left and take the focus away.
 		window.scrollTo(0, stay.top);
@@ -53,12 +56,14 @@ export function createTimeline(): Timeline {
 		},
 		undo: () => step(-1),
 		redo: () => step(1),
-		go: (address, inPlace = false) =>
-			goto(address, {
+		go(address, inPlace = false) {
+			pushing ||= !inPlace;
+			return goto(address, {
 				keepFocus: true,
 				noScroll: true,
-				replaceState: inPlace,
-				state: { changes: inPlace ? at : at + 1 }
-			})
+				replaceState: !pushing,
+				state: { changes: pushing ? at + 1 : at }
+			});
+		}
 	};
 }
