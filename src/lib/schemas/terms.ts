@@ -104,3 +104,11 @@ export type MailKind = (typeof MAIL_KINDS)[number];
 
 export const MAIL_STATES = ['waiting', 'sending', 'sent', 'failed', 'dropped'] as const;
 export type MailState = (typeof MAIL_STATES)[number];
+
+/**
+ * Probability of one shared exit from which canals are treated as joined, unless somebody asks for another. High, because shortening
+ * a separate canal leaves it unfilled, the worse mistake (inference, section 4).
+ */
+export const USUAL_THRESHOLD = 0.9;
+/** What screens offer; the API takes up to 0.999. */
+export const THRESHOLD_RANGE = [0.5, 0.99] as const;

@@ -73,13 +73,32 @@ export const drawing = {
 			`${label}: ${percent(mean)}, 95 % interval ${range(interval)}`
 	},
 	findings: {
-		'cone-mark':
-			'A cone to length in one canal, a file in the other: where the canals meet, the file marks the cone.',
-		draw: 'Irrigant is drawn from one canal and its level falls in the other.',
-		'file-contact': 'Files in both canals touch where the canals meet, and the apex locator shows it.',
-		'two-files':
-			'One file is at full length; the second stops where the canals meet, so its handle stands higher.',
-		'angled-radiograph': 'An angled radiograph on which the canals seem to run together.',
-		'cbct-reading': 'Three sections of a CBCT: two canals, two canals nearer, one canal.'
-	} satisfies Record<PicturedFinding, string>
+		'cone-mark': {
+			positive:
+				'A cone to length in one canal, a file in the other: where the canals meet, the file marks the cone.',
+			negative:
+				'A cone to length in one canal, a file in the other: they do not touch, the cone comes out smooth.'
+		},
+		draw: {
+			positive: 'Irrigant is drawn from one canal and its level falls in the other.',
+			negative: 'Irrigant is drawn from one canal and its level stays in the other.'
+		},
+		'file-contact': {
+			positive: 'Files in both canals touch where the canals meet, and the apex locator shows it.',
+			negative: 'Files at length in both canals do not touch, and the apex locator shows nothing.'
+		},
+		'two-files': {
+			positive:
+				'One file is at full length; the second stops where the canals meet, so its handle stands higher.',
+			negative: 'Both files stand at full length at the same time, their handles level.'
+		},
+		'angled-radiograph': {
+			positive: 'An angled radiograph on which the canals seem to run together.',
+			negative: 'An angled radiograph on which the canals seem to stay apart.'
+		},
+		'cbct-reading': {
+			positive: 'Three sections of a CBCT: two canals, two canals nearer, one canal.',
+			negative: 'Three sections of a CBCT, two canals in each.'
+		}
+	} satisfies Record<PicturedFinding, { positive: string; negative: string }>
 };

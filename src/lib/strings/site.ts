@@ -22,6 +22,7 @@ export const site = {
 		themes: { system: 'As the device', light: 'Light', dark: 'Dark' },
 		numbers: 'Tooth numbers',
 		systems: { iso: 'ISO 3950 (16)', universal: 'Universal (3)', palmer: 'Palmer (UR6)' },
+		threshold: 'Treat as joined from',
 		save: 'Keep',
 		note: 'Kept in one cookie on this device; no account needed.'
 	},
