@@ -39,3 +39,9 @@ export const SEARCHES = ['unaided', 'loupes', 'microscope', 'microscope-troughin
 export const MEASUREMENT_KINDS = ['cone-mark', 'cone-shortfall', 'file-contact', 'cbct'] as const;
 /** How far the second canal was shaped. */
 export const SHAPED_TO = ['full', 'confluence', 'unknown'] as const;
+
+/** The nine yes/no questions of a root, as addresses name them. */
+export const QUESTION_NAMES = ['q1', 'q2', 'q3', 'q4', 'q5', 'q6', 'q7', 'q8', 'q9'] as const;
+/** Orders of the samples of a question, as screens offer them. */
+export const STUDY_SORTS = ['share', 'year', 'size', 'weight', 'source', 'country'] as const;
+export type StudySort = (typeof STUDY_SORTS)[number];
