@@ -32,7 +32,7 @@ export const compare = {
 	fates: 'What becomes of the canals',
 	questions: 'Question by question',
 	questionsNote:
-		'The middle is the average population; the next is a new one, from which a patient comes. A difference is named only where its 95 % range leaves out none.',
+		'The middle is the average population; the next is a new one, from which a patient comes. A difference is named only where its 95 % range leaves out 0.',
 	question: 'Question',
 	middle: 'Middle population',
 	next: 'New population',
@@ -47,7 +47,7 @@ export const compare = {
 	differs: (side: string, mean: number, [from, to]: readonly [number, number]) =>
 		`On average more often yes on the ${side} side: by ${points(mean)} (range ${signed(from)} to ${signed(to)}).`,
 	open: (mean: number, [from, to]: readonly [number, number]) =>
-		`No difference shown on average: ${signed(mean)} points, first less second, with a range of ${signed(from)} to ${signed(to)} that includes none.`,
+		`No difference shown on average: ${signed(mean)} points, first less second, with a range of ${signed(from)} to ${signed(to)}, which includes 0.`,
 	chance: (side: string, probability: number, overlap: boolean) =>
 		`For a new population of each, the ${side} side is the higher one in ${inWords(probability)} pairs; the two ranges ${overlap ? 'overlap' : 'do not overlap'}.`,
 	either: (overlap: boolean) =>

@@ -1,7 +1,7 @@
 import type { Fate } from '$lib/anatomy/sequence';
 import type { LengthStanding } from '$lib/drawing/expectation';
 import type { PicturedFinding } from '$lib/drawing/findingPicture';
-import { count, mm, percent, range } from './format';
+import { count, mm, mmRange, percent, range } from './format';
 
 /** A figure with its range, once where both read alike. */
 function figure(mean: number, interval: readonly [number, number]): string {
@@ -17,10 +17,10 @@ export const drawing = {
 		levelNotPublished: ['level not', 'published'],
 		levelPublished: (levelMm: number, rangeMm?: readonly [number, number]) => [
 			'meet at',
-			rangeMm ? `${rangeMm[0]} to ${mm(rangeMm[1])}` : mm(levelMm)
+			rangeMm ? mmRange(rangeMm) : mm(levelMm)
 		],
-		levelRange: ([from, to]: readonly [number, number], drawnMm: number) =>
-			`The published level of the confluence is a range, ${from} to ${mm(to)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
+		levelRange: (rangeMm: readonly [number, number], drawnMm: number) =>
+			`The published level of the confluence is a range, ${mmRange(rangeMm)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
 		scale: 'Heights are to scale in mm above the root end; widths are not.',
 		length: (lengthMm: number, standing: LengthStanding) =>
 			({

@@ -15,7 +15,7 @@ const ABOUT_EVEN = 0.05;
 
 /**
  * What can be said of a difference, in sentences. A difference of the middle populations is claimed only where its 95 %
- * range leaves out none; of new populations it is said how often either is the higher one.
+ * range leaves out 0; of new populations it is said how often either is the higher one.
  *
  * @param ranges the predictive intervals of both sides
  */

@@ -22,7 +22,7 @@ const NOTE_PX = 11;
 const NOTE_LINE_PX = 16;
 const NOTE_MARGIN = 12;
 /** At 11 px this many letters of any of the fonts stay inside the width. */
-const NOTE_LETTERS = 54;
+const NOTE_LETTERS = 58;
 
 /** Presentation attributes of the classes that the drawing's components use; a file has no style sheet. */
 const ATTRIBUTES: Record<string, string> = {
