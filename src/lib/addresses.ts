@@ -12,3 +12,8 @@ export function joinAddress(tooth: string, root: string): string {
 export function sourceAddress(id: string): string {
 	return `/sources/${encodeURIComponent(id)}`;
 }
+
+/** Address of the API's answer to what to expect of a root. */
+export function expectationAddress(tooth: string, root: string): string {
+	return `/api/v1/teeth/${tooth}/roots/${root}/expectation`;
+}

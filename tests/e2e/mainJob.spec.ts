@@ -144,8 +144,8 @@ test.describe('the main job', () => {
 			expect(await page.getByText(/^From \d/).innerText()).not.toBe(all);
 			await page.goto(`${ROOT}?yearFrom=abc`);
 			await expect(page.getByRole('alert')).toContainText('Give a year');
-			await expect(page.locator('input[name=yearFrom]')).toHaveValue('abc');
-			await expect(page.locator('input[name=yearFrom]')).toHaveAttribute('aria-invalid', 'true');
+			await expect(page.locator('input.field[name=yearFrom]')).toHaveValue('abc');
+			await expect(page.locator('input.field[name=yearFrom]')).toHaveAttribute('aria-invalid', 'true');
 		});
 	});
 });

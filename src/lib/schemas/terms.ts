@@ -112,3 +112,9 @@ export type MailState = (typeof MAIL_STATES)[number];
 export const USUAL_THRESHOLD = 0.9;
 /** What screens offer; the API takes up to 0.999. */
 export const THRESHOLD_RANGE = [0.5, 0.99] as const;
+
+/** The nine yes/no questions of a root, as addresses name them. */
+export const QUESTION_NAMES = ['q1', 'q2', 'q3', 'q4', 'q5', 'q6', 'q7', 'q8', 'q9'] as const;
+/** Orders of the samples of a question, as screens offer them. */
+export const STUDY_SORTS = ['share', 'year', 'size', 'weight', 'source', 'country'] as const;
+export type StudySort = (typeof STUDY_SORTS)[number];

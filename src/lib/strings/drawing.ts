@@ -1,7 +1,7 @@
 import type { Fate } from '$lib/anatomy/sequence';
 import type { LengthStanding } from '$lib/drawing/expectation';
 import type { PicturedFinding } from '$lib/drawing/findingPicture';
-import { count, mm, percent, range } from './format';
+import { count, mm, mmRange, percent, range } from './format';
 
 /** A figure with its range, once where both read alike. */
 function figure(mean: number, interval: readonly [number, number]): string {
@@ -17,10 +17,10 @@ export const drawing = {
 		levelNotPublished: ['level not', 'published'],
 		levelPublished: (levelMm: number, rangeMm?: readonly [number, number]) => [
 			'meet at',
-			rangeMm ? `${rangeMm[0]} to ${mm(rangeMm[1])}` : mm(levelMm)
+			rangeMm ? mmRange(rangeMm) : mm(levelMm)
 		],
-		levelRange: ([from, to]: readonly [number, number], drawnMm: number) =>
-			`The published level of the confluence is a range, ${from} to ${mm(to)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
+		levelRange: (rangeMm: readonly [number, number], drawnMm: number) =>
+			`The published level of the confluence is a range, ${mmRange(rangeMm)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
 		scale: 'Heights are to scale in mm above the root end; widths are not.',
 		length: (lengthMm: number, standing: LengthStanding) =>
 			({
@@ -30,6 +30,10 @@ export const drawing = {
 			})[standing],
 		legend: 'Canal sequences, from orifice to exit',
 		legendHint: 'Choose a sequence to see it alone; choose it again to see all.',
+		alone: (sequence: string) => `Shown alone: ${sequence}.`,
+		showAll: 'Show all sequences',
+		alsoSeen: 'Also named by samples of this root',
+		countedWith: (leaf: string) => `counted with ${leaf}`,
 		strength: 'The stronger a stream is drawn, the more probable it is.',
 		meeting: 'Canals meet here',
 		dashed: 'Dashed: they meet, but no source gives the level',
@@ -51,14 +55,27 @@ export const drawing = {
 		method: 'Method',
 		counts: 'Of roots',
 		percent: 'Share (95 %)',
+		weight: 'Weight',
 		plot: 'Plot, 0 to 100 %',
+		weightOf: (weight: number) => percent(weight),
+		weightLabel: 'weight',
+		marks: {
+			secondary: 'quoted in another source',
+			unverified: 'unverified'
+		},
+		group: (name: string, samples: number, observed: readonly [number, number], weight: number | null) =>
+			`${name}: ${count(samples)} ${samples === 1 ? 'sample' : 'samples'}, ${range(observed)}${
+				weight === null ? '' : `, weight ${percent(weight)}`
+			}`,
 		of: (events: number, total: number) => `${count(events)} of ${count(total)}`,
 		share: (proportion: number, interval: readonly [number, number]) => figure(proportion, interval),
 		pooled: 'Pooled: the middle population',
 		predictive: 'Predicted: a new population',
 		noCountry: 'country not given',
-		intervals:
-			'Square: a study, larger with more roots; line: its 95 % interval (Wilson). Diamond: pooled. Band: where a new population is expected, 95 %.',
+		intervals: (weighed: boolean) =>
+			`Square: a study, larger with ${weighed ? 'more weight' : 'more roots'}; line: its 95 % interval (Wilson). Diamond: pooled. Band: where a new population is expected, 95 %.`,
+		weights:
+			'Weight: the share of the information about the middle population that a sample gives. Where populations differ much, a large sample counts little more than a small one.',
 		empty: 'No study answers this question for this root.'
 	},
 	coverage: {

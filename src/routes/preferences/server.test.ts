@@ -13,7 +13,9 @@ async function send(fields: Record<string, string>, before: Preferences = readPr
 	const cookies = { set: (name: string, value: string) => (kept[name] = value) } as unknown as Cookies;
 	const request = new Request(`${ORIGIN}/preferences`, { method: 'POST', body: new URLSearchParams(fields) });
 	try {
-		await POST(requestEvent(request, { cookies, locals: { requestId: '', preferences: before } }));
+		await POST(
+			requestEvent(request, { cookies, locals: { requestId: '', preferences: before, user: null } })
+		);
 	} catch (thrown) {
 		if (!isRedirect(thrown)) throw thrown;
 		return { status: thrown.status, location: thrown.location, kept };

@@ -1,4 +1,4 @@
-import { leafFacts, LEAVES, type Leaf } from '$lib/anatomy/sequence';
+import { describeSequence } from '$lib/anatomy/sequence';
 import type { ExpectationData } from '$lib/drawing/expectation';
 import { percent, range } from '$lib/strings/format';
 import { root as words } from '$lib/strings/root';
@@ -24,19 +24,21 @@ export interface RootShape {
  */
 export function toExpectationData(
 	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[],
-	shape: RootShape
+	shape: RootShape,
+	rare: readonly { sequence: string }[] = []
 ): ExpectationData {
-	const isLeaf = (sequence: string): sequence is Leaf => (LEAVES as readonly string[]).includes(sequence);
+	const levelOf = (sequence: string) =>
+		describeSequence(sequence).fate === 'shared-exit' && shape.confluence ? shape.confluence.mm : null;
 	return {
 		sequences: sequences.map(({ sequence, mean, interval }) => ({
 			sequence,
 			probability: mean,
 			interval,
-			joinLevelMm:
-				isLeaf(sequence) && leafFacts(sequence).fate === 'shared-exit' && shape.confluence
-					? shape.confluence.mm
-					: null
+			joinLevelMm: levelOf(sequence)
 		})),
+		...(rare.length > 0 && {
+			alsoSeen: rare.map(({ sequence }) => ({ sequence, joinLevelMm: levelOf(sequence) }))
+		}),
 		rootLengthMm: shape.length.mm,
 		lengthStanding:
 			shape.length.source === null ? 'assumed' : shape.length.verified ? 'published' : 'unverified',
