@@ -179,3 +179,13 @@ export const wholeTableSchema = z.object({
 	filters: tableQuerySchema.describe('What the rows were narrowed to; empty for the whole table'),
 	rows: z.array(observationSchema)
 });
+
+/** Something the table took from a source besides its entries, in words. */
+export interface SourceFact {
+	head: string;
+	figures: string;
+	detail: string;
+	/** Null where it was worked out rather than read. */
+	provenance: 'read' | 'secondary' | 'memory' | null;
+	verified: boolean;
+}
