@@ -14,6 +14,7 @@ import { defineLiterature } from '../../src/lib/server/db/models/literature';
 import { defineSupplements } from '../../src/lib/server/db/models/supplements';
 import { readSnapshot, type TableSnapshot } from '../../src/lib/server/table/snapshot';
 import { MeasuredServer } from './server';
+import { measureTable } from './table';
 
 const RICHEST = { tooth: 'maxillary-first-molar', root: 'MB' };
 const ROOT_PAGE = `/teeth/${RICHEST.tooth}/${RICHEST.root}`;
@@ -145,6 +146,7 @@ try {
 	await database.close();
 	await rates(server);
 	await coldAtOnce(server);
+	await measureTable(server, print);
 } finally {
 	await server.stop();
 }
