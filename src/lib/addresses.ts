@@ -17,3 +17,8 @@ export function sourceAddress(id: string): string {
 export function expectationAddress(tooth: string, root: string): string {
 	return `/api/v1/teeth/${tooth}/roots/${root}/expectation`;
 }
+
+/** Address of the page of an entry of the table. */
+export function entryAddress(id: number): string {
+	return `/table/${id}`;
+}
