@@ -5,6 +5,7 @@ import { tableCoverageSchema } from '$lib/schemas/coverage';
 import { expectationSchema } from '$lib/schemas/expectation';
 import { levelRequestSchema, levelResponseSchema } from '$lib/schemas/level';
 import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
+import { searchQuerySchema, searchSchema } from '$lib/schemas/search';
 import {
 	entriesQuerySchema,
 	entriesSchema,
@@ -28,6 +29,8 @@ export interface Operation {
 	example?: unknown;
 	/** Values of the path for the example; teeth and roots have theirs already. */
 	exampleParameters?: Record<string, string>;
+	/** Query of the example, where the operation says little without one. */
+	exampleQuery?: string;
 	response: z.ZodType;
 	/** Statuses other than 200 that the operation may answer with, besides 429. */
 	failures: number[];
@@ -105,6 +108,16 @@ export const operations: Operation[] = [
 		summary: 'One source with its CSL-JSON',
 		response: sourceSchema,
 		failures: [404, 422]
+	},
+	{
+		method: 'get',
+		path: '/search',
+		id: 'search',
+		summary: 'Teeth, roots, features, sources and countries that a typed phrase may mean',
+		query: searchQuerySchema,
+		exampleQuery: '?q=mb2',
+		response: searchSchema,
+		failures: [422]
 	},
 	{
 		method: 'post',
