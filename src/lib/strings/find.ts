@@ -34,6 +34,7 @@ export const find = {
 	recent: 'Looked up on this device',
 	recentNote: 'Kept on this device only.',
 	clearRecent: 'Forget these',
+	shortcuts: 'Press / or Ctrl+K anywhere to look something up.',
 	suggestions: 'Suggestions',
 	suggestionCount: (count: number) =>
 		count === 0

@@ -10,11 +10,10 @@ export const site = {
 		about: 'What this is and is not'
 	},
 	search: {
-		label: 'Look up a tooth, root or feature',
-		placeholder: '16, #14, UL6, upper first molar, mb2',
+		label: 'Look up a tooth, root, feature, source or country',
+		placeholder: '16, #14, UL6, upper first molar, mb2, vertucci 84',
 		placeholderShort: '16, UL6, mb2',
-		button: 'Look up',
-		shortcut: 'Press / to look up'
+		button: 'Look up'
 	},
 	preferences: {
 		title: 'On this device',
