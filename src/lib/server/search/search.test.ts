@@ -61,7 +61,7 @@ describe('search over the shipped table puts first', () => {
 });
 
 describe('search', () => {
-	it.each(['', '   ', '?', 'xyzzy', '99', '☃'])('finds nothing for %j', async (query) => {
+	it.each(['', '   ', '?', 'xyzzy', 'zzzz', '99', '☃'])('finds nothing for %j', async (query) => {
 		expect(await search(query, 'iso', 8)).toEqual({ hits: [], exact: null });
 	});
 

@@ -109,14 +109,10 @@ function placeHit(hit: LookUpHit, numbers: NumberingSystem): SearchHit {
 	const name = side ? tooth.name.replace(' ', ` ${side} `) : tooth.name;
 	const number = hit.iso ? ` (${formatToothNumber(hit.iso, numbers)})` : '';
 	const root = hit.root ? `, ${rootOf(tooth.id, hit.root)!.name.toLowerCase()}` : '';
-	const title = `${name}${number}${root}`;
-	const kind = hit.feature ? 'feature' : hit.root ? 'root' : 'tooth';
 	return {
-		kind,
-		title: hit.feature
-			? `${featureName(hit.feature)}: ${title.charAt(0).toLowerCase()}${title.slice(1)}`
-			: title,
-		detail: hit.why === name ? '' : hit.why,
+		kind: hit.feature ? 'feature' : hit.root ? 'root' : 'tooth',
+		title: `${name}${number}${root}`,
+		detail: hit.feature ? featureName(hit.feature) : hit.why === name ? '' : hit.why,
 		address: addressOf(hit)
 	};
 }

@@ -25,6 +25,8 @@ const FUZZY_DISTANCE = 0.3;
 const FUZZY_THRESHOLD = 0.4;
 const MIN_FUZZY_CHARACTERS = 4;
 const MIN_PREFIX_CHARACTERS = 2;
+/** From here on two letters may be wrong, before only one. */
+const LONG_WORD_CHARACTERS = 8;
 
 /** Words of a text as they are compared: lower case, without accents. */
 export function wordsOf(text: string): string[] {
@@ -85,12 +87,30 @@ export class WordIndex<Item> {
 		const found = new Map<string, number>();
 		if (typed.length >= MIN_FUZZY_CHARACTERS && !/\d/.test(typed))
 			for (const { item, score = 1 } of this.#near.search(typed))
-				if (Math.abs(item.length - typed.length) <= 2) found.set(item, FUZZY_DISTANCE + score);
+				if (isMisspelling(typed, item)) found.set(item, FUZZY_DISTANCE + score);
 		if (typed.length >= MIN_PREFIX_CHARACTERS)
 			for (const word of this.#vocabulary) if (word.startsWith(typed)) found.set(word, PREFIX_DISTANCE);
 		found.set(typed, 0);
 		return found;
 	}
+}
+
+/** A word misspelt has nearly the letters of the right one; Fuse alone finds `zz` in many. */
+function isMisspelling(typed: string, word: string): boolean {
+	const most = typed.length < LONG_WORD_CHARACTERS ? 1 : 2;
+	return lettersLacking(typed, word) <= most && lettersLacking(word, typed) <= most;
+}
+
+/** How many letters of the first text the second does not have, each counted as often as it comes. */
+function lettersLacking(text: string, other: string): number {
+	const left = [...other];
+	let lacking = 0;
+	for (const letter of text) {
+		const at = left.indexOf(letter);
+		if (at < 0) lacking += 1;
+		else left.splice(at, 1);
+	}
+	return lacking;
 }
 
 function nearest(candidates: ReadonlyMap<string, number>, words: ReadonlyMap<string, number>) {
