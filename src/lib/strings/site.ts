@@ -21,6 +21,8 @@ export const site = {
 		themes: { system: 'As the device', light: 'Light', dark: 'Dark' },
 		numbers: 'Tooth numbers',
 		systems: { iso: 'ISO 3950 (16)', universal: 'Universal (3)', palmer: 'Palmer (UR6)' },
+		unitsOf: 'Probabilities',
+		units: { percent: 'in % (35 to 88 %)', 'in-100': 'in 100 (35 to 88 in 100)' },
 		save: 'Keep',
 		note: 'Kept in one cookie on this device; no account needed.'
 	},

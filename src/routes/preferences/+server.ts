@@ -7,7 +7,11 @@ const KEPT_SECONDS = 365 * 24 * 60 * 60;
 /** Keeps a visitor's preferences in a cookie and goes back to the page they came from. */
 export const POST: RequestHandler = async ({ request, cookies, url }) => {
 	const form = await request.formData().catch(() => error(400, 'This is not the form of the preferences.'));
-	const chosen = preferencesSchema.safeParse({ theme: form.get('theme'), numbers: form.get('numbers') });
+	const chosen = preferencesSchema.safeParse({
+		theme: form.get('theme'),
+		numbers: form.get('numbers'),
+		units: form.get('units') ?? undefined
+	});
 	if (chosen.success) {
 		cookies.set(PREFERENCES_COOKIE, JSON.stringify(chosen.data), {
 			path: '/',

@@ -23,9 +23,13 @@ async function send(fields: Record<string, string>) {
 describe('the preferences form', () => {
 	it('keeps the choice and leads back to the page it came from', async () => {
 		const back = '/teeth/maxillary-first-molar/MB?method=cbct';
-		const sent = await send({ theme: 'dark', numbers: 'universal', back });
+		const sent = await send({ theme: 'dark', numbers: 'universal', units: 'in-100', back });
 		expect(sent).toMatchObject({ status: 303, location: back });
-		expect(JSON.parse(sent.kept[PREFERENCES_COOKIE])).toEqual({ theme: 'dark', numbers: 'universal' });
+		expect(JSON.parse(sent.kept[PREFERENCES_COOKIE])).toEqual({
+			theme: 'dark',
+			numbers: 'universal',
+			units: 'in-100'
+		});
 	});
 
 	it('keeps nothing of a choice that is none', async () => {
