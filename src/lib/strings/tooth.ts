@@ -25,7 +25,7 @@ export const tooth = {
 	largest: (samples: string) => `Largest samples: ${samples}.`,
 	lookFor: 'What to look for',
 	lookForNote:
-		'From the figures on this page, the most frequent first. The range says how far populations differ; it is not a finding in this patient.',
+		'From the figures on this page, the most frequent first; what rests on one or two samples stands last. The range says how far populations differ; it is not a finding in this patient.',
 	lookForEmpty:
 		'No figure of the table points to anything beyond one canal in each root. That is a lack of samples as much as a finding: look.',
 	secondCanal: (root: string, degree: 'expect' | 'look' | 'uncommon') =>
@@ -65,7 +65,7 @@ export const tooth = {
 	teeth: 'Teeth',
 	counted: 'Counted',
 	countOf: (category: string, share: string) => `${category}: ${share}`,
-	features: 'What else to look for',
+	features: 'Features, with their samples',
 	featuresNote:
 		'How often a feature is there: the range in which a new population is expected (95 %), from the samples named.',
 	featuresEmpty: 'No sample of all such teeth reports a feature.',

@@ -18,7 +18,7 @@ interface LookForItem {
 	figure: string;
 	/** Samples it rests on. */
 	samples: number;
-	/** Middle probability in a new population, 0..1; the list is ordered by it. */
+	/** Middle probability in a new population, 0..1; what rests on enough samples is ordered by it. */
 	mean: number;
 }
 
@@ -26,6 +26,8 @@ interface LookForItem {
 const WORTH_A_LINE = 0.03;
 /** So is one that some populations may have this often, however rare it is on the whole. */
 const WORTH_A_WARNING = 0.15;
+/** Fewer samples than this say little of other populations: what rests on them stands last. */
+export const FEW_SAMPLES = 3;
 const EXPECTED_FROM = 0.5;
 const LIKELY_FROM = 0.1;
 
@@ -44,7 +46,7 @@ const ASKED: Record<'maxillary' | 'mandibular', Partial<Record<string, readonly 
 };
 
 /**
- * What to look for in a tooth, the likeliest first: further canals of its roots and its features, from the pooled
+ * What to look for in a tooth, the likeliest first, what rests on few samples last: further canals of its roots and its features, from the pooled
  * figures alone. A root that no sample answers for is left out: its figures are borrowed and say nothing of it.
  */
 export function lookFor(
@@ -78,7 +80,8 @@ export function lookFor(
 			}
 		];
 	});
-	return [...canals, ...others].sort((a, b) => b.mean - a.mean);
+	const thin = ({ samples }: LookForItem) => Number(samples < FEW_SAMPLES);
+	return [...canals, ...others].sort((a, b) => thin(a) - thin(b) || b.mean - a.mean);
 }
 
 /** Names of features one would ask about in this tooth and of which the table has no sample. */
