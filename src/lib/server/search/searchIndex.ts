@@ -54,7 +54,7 @@ export async function readSearchIndex(db: Sequelize): Promise<SearchIndex> {
 }
 
 /** Sources by authors, year and title. */
-export function indexSources(sources: readonly { id: string; csl: CslSource }[]): WordIndex<SearchedSource> {
+function indexSources(sources: readonly { id: string; csl: CslSource }[]): WordIndex<SearchedSource> {
 	const searched = sources.map(({ id, csl }) => ({ id, csl, year: yearOf(csl) }));
 	return new WordIndex(searched, ({ csl, year }) => {
 		const authors = (csl.author ?? []).flatMap(({ family, literal, given }, place) =>
@@ -69,9 +69,7 @@ export function indexSources(sources: readonly { id: string; csl: CslSource }[])
 }
 
 /** Countries by their names in several languages; a sample of several countries counts for each. */
-export function indexCountries(
-	counts: readonly { country: string; entries: number }[]
-): WordIndex<SearchedCountry> {
+function indexCountries(counts: readonly { country: string; entries: number }[]): WordIndex<SearchedCountry> {
 	const byCode = new Map<string, number>();
 	for (const { country, entries } of counts)
 		for (const code of country.split('+'))
@@ -83,7 +81,7 @@ export function indexCountries(
 }
 
 /** Where the pages of teeth and roots show a feature, by the number of samples. */
-export function featurePlaces(index: TableIndex): FeaturePlace[] {
+function featurePlaces(index: TableIndex): FeaturePlace[] {
 	const found = teeth.flatMap((tooth) =>
 		[null, ...tooth.roots].flatMap((root) =>
 			gatherFeatures(index, tooth.id, root, {}).map(({ id, studies }) => ({
