@@ -27,6 +27,10 @@ declare global {
 			/** The installation's name, empty if it has none. */
 			installation: string;
 		}
+		interface PageData {
+			/** From the root layout; absent where even that failed. */
+			preferences?: Preferences;
+		}
 	}
 }
 

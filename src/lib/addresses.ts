@@ -22,3 +22,13 @@ export function expectationAddress(tooth: string, root: string): string {
 export function entryAddress(id: number): string {
 	return `/table/${id}`;
 }
+
+/** Address of a feature on the page of a tooth or of one of its roots. */
+export function featureAddress(tooth: string, root: string | undefined, feature: string): string {
+	return `${placeAddress(tooth, root)}#feature-${feature}`;
+}
+
+/** Address of the table, narrowed to samples from a country (ISO 3166-1 alpha-3). */
+export function countryAddress(code: string): string {
+	return `/table?country=${code}`;
+}

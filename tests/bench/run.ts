@@ -13,6 +13,7 @@ import { openDatabase } from '../../src/lib/server/db/connection';
 import { defineLiterature } from '../../src/lib/server/db/models/literature';
 import { defineSupplements } from '../../src/lib/server/db/models/supplements';
 import { readSnapshot, type TableSnapshot } from '../../src/lib/server/table/snapshot';
+import { scriptBytes } from '../support/pageScripts';
 import { lighthouseMarks } from './screens';
 import { MeasuredServer } from './server';
 import { measureTable } from './table';
@@ -156,6 +157,14 @@ try {
 	defineSupplements(database);
 	calculations(await readSnapshot(database));
 	await database.close();
+	for (const [name, screen] of Object.entries(SCREENS)) {
+		const kB = (await scriptBytes(server.address, screen)) / 1000;
+		print(
+			`scripts of the ${name} page, gzip`,
+			`${kB.toFixed(1)} kB`,
+			name === 'tooth' ? 'target ≤ 120 kB' : ''
+		);
+	}
 	await rates(server);
 	await coldAtOnce(server);
 	await lighthouseMarks(server.address, SCREENS, print);

@@ -56,7 +56,7 @@ test.describe('the main job', () => {
 	test('with the keyboard only', async ({ page }) => {
 		await open(page, '/about');
 		await page.keyboard.press('/');
-		await expect(page.getByRole('searchbox')).toBeFocused();
+		await expect(page.getByRole('combobox', { name: 'Look up' })).toBeFocused();
 		await page.keyboard.type('16');
 		await page.keyboard.press('Enter');
 		await expect(page).toHaveURL(TOOTH);
@@ -160,7 +160,7 @@ test.describe('one typed phrase finds the place', () => {
 	]) {
 		test(`"${phrase}"`, async ({ page }) => {
 			await open(page, '/');
-			await page.getByRole('searchbox').fill(phrase);
+			await page.getByRole('combobox', { name: 'Look up' }).fill(phrase);
 			await page.keyboard.press('Enter');
 			await page.waitForURL((url) => url.pathname !== '/' || url.searchParams.get('q') === phrase);
 			if (new URL(page.url()).pathname === '/')

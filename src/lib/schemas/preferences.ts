@@ -6,7 +6,9 @@ export const preferencesSchema = z.object({
 	theme: z.enum(['system', 'light', 'dark']).default('system'),
 	numbers: z.enum(['iso', 'universal', 'palmer']).default('iso'),
 	/** Probability of a shared exit from which canals are treated as joined. */
-	threshold: z.coerce.number().min(THRESHOLD_RANGE[0]).max(THRESHOLD_RANGE[1]).default(USUAL_THRESHOLD)
+	threshold: z.coerce.number().min(THRESHOLD_RANGE[0]).max(THRESHOLD_RANGE[1]).default(USUAL_THRESHOLD),
+	/** How probabilities and their ranges are written. */
+	units: z.enum(['percent', 'in-100']).default('percent')
 });
 
 export type Preferences = z.infer<typeof preferencesSchema>;

@@ -16,6 +16,9 @@ export const METHODS = [
 	'review'
 ] as const;
 
+/** Kinds of things a search finds. */
+export const SEARCH_KINDS = ['tooth', 'root', 'feature', 'source', 'country'] as const;
+
 /** Methods an estimate can be narrowed to: everything but published reviews, which are never pooled. */
 export const POOLED_METHODS = METHODS.filter((method) => method !== 'review');
 

@@ -1,7 +1,7 @@
 import type { Fate } from '$lib/anatomy/sequence';
 import type { LengthStanding } from '$lib/drawing/expectation';
 import type { PicturedFinding } from '$lib/drawing/findingPicture';
-import { count, mm, mmRange, percent, range } from './format';
+import { count, mm, mmRange, percent, range, type Format } from './format';
 
 /** A figure with its range, once where both read alike. */
 function figure(mean: number, interval: readonly [number, number]): string {
@@ -86,8 +86,8 @@ export const drawing = {
 			`Dashed line: ${from}. Diamonds: questions under it, or with under 70 % of samples in their 80 % range; they are named below.`
 	},
 	interval: {
-		text: (label: string, mean: number, interval: readonly [number, number]) =>
-			`${label}: ${percent(mean)}, 95 % interval ${range(interval)}`
+		text: (format: Format, label: string, mean: number, interval: readonly [number, number]) =>
+			`${label}: ${format.percent(mean)}, 95 % interval ${format.range(interval)}`
 	},
 	findings: {
 		'cone-mark': {

@@ -26,21 +26,26 @@ async function send(fields: Record<string, string>, before: Preferences = readPr
 describe('the preferences form', () => {
 	it('keeps the choice and leads back to the page it came from', async () => {
 		const back = '/teeth/maxillary-first-molar/MB?method=cbct';
-		const sent = await send({ theme: 'dark', numbers: 'universal', back });
+		const sent = await send({ theme: 'dark', numbers: 'universal', units: 'in-100', back });
 		expect(sent).toMatchObject({ status: 303, location: back });
 		expect(JSON.parse(sent.kept[PREFERENCES_COOKIE])).toEqual({
 			theme: 'dark',
 			numbers: 'universal',
-			threshold: 0.9
+			threshold: 0.9,
+			units: 'in-100'
 		});
 	});
 
 	it('keeps the decision line as a number, and what the form does not name as it was', async () => {
-		const { kept } = await send({ threshold: '0.95' }, { theme: 'dark', numbers: 'palmer', threshold: 0.8 });
+		const { kept } = await send(
+			{ threshold: '0.95' },
+			{ theme: 'dark', numbers: 'palmer', threshold: 0.8, units: 'in-100' }
+		);
 		expect(JSON.parse(kept[PREFERENCES_COOKIE])).toEqual({
 			theme: 'dark',
 			numbers: 'palmer',
-			threshold: 0.95
+			threshold: 0.95,
+			units: 'in-100'
 		});
 		for (const threshold of ['0.4', '1', '', 'high']) expect((await send({ threshold })).kept).toEqual({});
 	});

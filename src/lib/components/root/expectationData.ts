@@ -1,6 +1,6 @@
 import { describeSequence } from '$lib/anatomy/sequence';
 import type { ExpectationData } from '$lib/drawing/expectation';
-import { percent, range } from '$lib/strings/format';
+import { formatFor } from '$lib/strings/format';
 import { root as words } from '$lib/strings/root';
 
 /** A length or level with its standing, as the drawing needs it. */
@@ -47,12 +47,15 @@ export function toExpectationData(
 }
 
 /** What the drawing says, in words: the commonest sequences with their ranges. */
-export function describeExpectation(expectation: {
-	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[];
-}): string {
+export function describeExpectation(
+	expectation: { sequences: readonly { sequence: string; mean: number; interval: [number, number] }[] },
+	format = formatFor()
+): string {
 	const likely = [...expectation.sequences]
 		.sort((a, b) => b.mean - a.mean)
 		.slice(0, 3)
-		.map(({ sequence, mean, interval }) => `${sequence}: ${percent(mean)} (${range(interval)})`);
+		.map(
+			({ sequence, mean, interval }) => `${sequence}: ${format.percent(mean)} (${format.range(interval)})`
+		);
 	return words.drawingText(likely.join('; '));
 }
