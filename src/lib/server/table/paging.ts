@@ -120,3 +120,8 @@ export async function readPage<Row extends object>(
 		previousCursor: first && before > 0 ? encodeCursor(sort, first.sortKey, first.sortId, true) : null
 	};
 }
+
+/** A LIKE pattern that finds the words as typed, with SQL's own wildcards taken literally. */
+export function likePattern(words: string): string {
+	return `%${words.replace(/[\\%_]/g, (character) => `\\${character}`)}%`;
+}
