@@ -27,6 +27,7 @@ test('the table by mouse: search, filter, sort, page, columns, back and forward,
 	expect(found).not.toBe(everything);
 
 	await table(page).getByRole('link', { name: 'Total' }).click();
+	await expect(table(page).locator('[aria-sort="ascending"]')).toHaveText(/^Total/);
 	await table(page).getByRole('link', { name: /Total/ }).click();
 	await expect(page).toHaveURL('/table?method=cbct&q=saudi&sort=-total');
 	await expect(table(page).locator('[aria-sort="descending"]')).toHaveText(/^Total/);

@@ -25,8 +25,7 @@ export const PAGES = {
 	'join, three canals': `${JOIN}?canals=3&draw=positive&draw-pair=MB1-MB2`,
 	'join, no evidence': `${NO_EVIDENCE}/join?canals=2`,
 	compare: COMPARE,
-
-	table: '/table?limit=25&column=figures&column=total&column=source&column=year&column=standing',
+	table: '/table?limit=5&column=figures&column=total&column=source&column=year&column=standing',
 	'table with wrong filters': '/table?tooth=16&method=guess&q=zzzz',
 	entry: '/table/40',
 	sources: '/sources?q=vertucci',
