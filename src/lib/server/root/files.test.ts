@@ -4,9 +4,10 @@ import type { ExpectationData } from '$lib/drawing/expectation';
 import { QUESTION_NAMES } from '$lib/schemas/terms';
 import type { ExpectationDto } from '$lib/schemas/expectation';
 import { citedBy } from './cited';
-import { drawingSvg, wrapText } from './drawingFile';
+import { drawingSvg } from './drawingFile';
 import { drawingNotes } from './drawingNotes';
 import { samplesCsv } from './samplesFile';
+import { wrapText } from './wrapText';
 
 const summary = { mean: 0.6, median: 0.61, interval: [0.3, 0.9] as [number, number] };
 const study = {
