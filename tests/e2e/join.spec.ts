@@ -197,7 +197,7 @@ test('the decision line: the address wins over the device, the device over the u
 	expect(shares(set)).toBe(shares(usual));
 	// Moved in small steps, undone at once.
 	await page.keyboard.press('Control+z');
-	await expect(page).toHaveURL(THREE_FOUND);
+	await expect(answerOf(page)).toContainText('as kept on this device');
 
 	const box = page.getByRole('spinbutton');
 	await box.fill('50');

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { THRESHOLD_RANGE, USUAL_THRESHOLD } from './terms';
 
 /** What a person may choose without an account; kept in one cookie. A form sends text, the cookie holds numbers as numbers. */
-export const preferencesSchema = z.object({
+const preferencesSchema = z.object({
 	theme: z.enum(['system', 'light', 'dark']).default('system'),
 	numbers: z.enum(['iso', 'universal', 'palmer']).default('iso'),
 	/** Probability of a shared exit from which canals are treated as joined. */
