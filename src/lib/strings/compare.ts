@@ -1,4 +1,4 @@
-import { inWords, percent, range } from './format';
+import { inWords } from './format';
 
 const points = (difference: number) => {
 	const whole = Math.round(Math.abs(difference) * 100);
@@ -39,7 +39,6 @@ export const compare = {
 	verdict: 'What can be said',
 	borrowed: 'borrowed: no sample',
 	samples: (number: number) => `${number} ${number === 1 ? 'sample' : 'samples'}`,
-	figure: (mean: number, interval: readonly [number, number]) => `${percent(mean)} (${range(interval)})`,
 	noComparison:
 		'Nothing: one side or both have no sample of their own here, and borrowed figures are no evidence of a difference.',
 	sharedSources: (shared: number) =>

@@ -1,12 +1,7 @@
 import type { Fate } from '$lib/anatomy/sequence';
 import type { LengthStanding } from '$lib/drawing/expectation';
 import type { PicturedFinding } from '$lib/drawing/findingPicture';
-import { count, mm, mmRange, percent, range, type Format } from './format';
-
-/** A figure with its range, once where both read alike. */
-function figure(mean: number, interval: readonly [number, number]): string {
-	return percent(mean) === range(interval) ? percent(mean) : `${percent(mean)} (${range(interval)})`;
-}
+import { count, mm, mmRange, NO_BREAK, type Format } from './format';
 
 /** Interface texts of the drawings. */
 export const drawing = {
@@ -38,8 +33,8 @@ export const drawing = {
 		meeting: 'Canals meet here',
 		dashed: 'Dashed: they meet, but no source gives the level',
 		tooRare: 'too rare to draw',
-		probability: (probability: number, interval?: readonly [number, number]) =>
-			interval === undefined ? percent(probability) : figure(probability, interval)
+		probability: (format: Format, probability: number, interval?: readonly [number, number]) =>
+			interval === undefined ? format.percent(probability) : format.figure(probability, interval)
 	},
 	fates: {
 		'one-canal': 'One canal',
@@ -56,19 +51,23 @@ export const drawing = {
 		counts: 'Of roots',
 		percent: 'Share (95 %)',
 		weight: 'Weight',
-		plot: 'Plot, 0 to 100 %',
-		weightOf: (weight: number) => percent(weight),
+		plot: (format: Format) => `Plot, 0 to 100${NO_BREAK}${format.unit}`,
 		weightLabel: 'weight',
 		marks: {
 			secondary: 'quoted in another source',
 			unverified: 'unverified'
 		},
-		group: (name: string, samples: number, observed: readonly [number, number], weight: number | null) =>
-			`${name}: ${count(samples)} ${samples === 1 ? 'sample' : 'samples'}, ${range(observed)}${
-				weight === null ? '' : `, weight ${percent(weight)}`
+		group: (
+			format: Format,
+			name: string,
+			samples: number,
+			observed: readonly [number, number],
+			weight: number | null
+		) =>
+			`${name}: ${count(samples)} ${samples === 1 ? 'sample' : 'samples'}, ${format.range(observed)}${
+				weight === null ? '' : `, weight ${format.percent(weight)}`
 			}`,
 		of: (events: number, total: number) => `${count(events)} of ${count(total)}`,
-		share: (proportion: number, interval: readonly [number, number]) => figure(proportion, interval),
 		pooled: 'Pooled: the middle population',
 		predictive: 'Predicted: a new population',
 		noCountry: 'country not given',

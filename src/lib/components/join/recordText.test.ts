@@ -2,6 +2,7 @@ import { confluence } from '$lib/strings/confluence';
 import type { LevelDto } from '$lib/schemas/level';
 import { describe, expect, it } from 'vitest';
 import { inventedAnswer } from '../../../../tests/support/confluenceAnswer';
+import { formatFor } from '$lib/strings/format';
 import { recordText, saidOf, type RecordInput } from './recordText';
 import { readState } from './state';
 
@@ -22,6 +23,7 @@ const level: LevelDto = {
 
 function record(changes: Partial<RecordInput> = {}, query = 'search=microscope') {
 	return recordText({
+		format: formatFor(),
 		tooth: 'Upper first molar',
 		root: 'Mesiobuccal root',
 		canals: ['MB1', 'MB2'],

@@ -3,7 +3,7 @@ import { SEARCHES, TESTS } from '$lib/schemas/terms';
 import type { LevelDto } from '$lib/schemas/level';
 import { confluence } from '$lib/strings/confluence';
 import { drawing } from '$lib/strings/drawing';
-import { percent, range } from '$lib/strings/format';
+import type { Format } from '$lib/strings/format';
 import { join as words } from '$lib/strings/join';
 import { level as levelWords } from '$lib/strings/level';
 import { toFateList } from '$lib/components/root/fateList';
@@ -25,6 +25,8 @@ export interface RecordInput {
 	date: string;
 	/** The address that gives this answer again. */
 	address: string;
+	/** Figures as the screen writes them. */
+	format: Format;
 }
 
 /** The name of what was assumed: a test, a way of searching, or the isthmus. */
@@ -35,8 +37,10 @@ export function assumedName(id: string): string {
 	return search ? words.searchNamed(confluence.searches[search]) : (words.assumedNames[id] ?? id);
 }
 
-const figure = ({ mean, interval }: { mean: number; interval: [number, number] }) =>
-	`${percent(mean)} (${range(interval)})`;
+const figureWriter =
+	({ percent, range }: Format) =>
+	({ mean, interval }: { mean: number; interval: [number, number] }) =>
+		`${percent(mean)} (${range(interval)})`;
 
 const searchName = (search: string | undefined) =>
 	confluence.searches[SEARCHES.find((one) => one === search) ?? 'unaided'];
@@ -66,7 +70,8 @@ function findingLines({ steps }: ConfluenceDto): string[] {
 	];
 }
 
-function estimateLines(answer: ConfluenceDto): string[] {
+function estimateLines(answer: ConfluenceDto, format: Format): string[] {
+	const figure = figureWriter(format);
 	const { posterior, prior, steps } = answer;
 	const before = steps.length > 0 ? `, ${words.record.before(figure(prior.meet))}` : '';
 	const { anotherCanal } = posterior;
@@ -80,7 +85,7 @@ function estimateLines(answer: ConfluenceDto): string[] {
 	];
 }
 
-function adviceLines(answer: ConfluenceDto, line: DecisionLine): string[] {
+function adviceLines(answer: ConfluenceDto, line: DecisionLine, { percent }: Format): string[] {
 	const advice = adviceOf(answer);
 	const lines = [`${words.record.advice}: ${advice.head}. ${advice.sentence}`, ...advice.cautions];
 	if (advice.heldBack) lines.push(words.advice.heldBack);
@@ -127,9 +132,9 @@ export function recordText(input: RecordInput): string {
 		...saidOf(input).map(([name, value]) => `${name}: ${value}`),
 		...(state.canals === 1 ? [] : findingLines(answer)),
 		'',
-		...estimateLines(answer),
+		...estimateLines(answer, input.format),
 		'',
-		...adviceLines(answer, line),
+		...adviceLines(answer, line, input.format),
 		...levelLines(level, answer.decision?.advice === 'treat-as-joined'),
 		'',
 		...basisLines(answer),

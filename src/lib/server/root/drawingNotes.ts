@@ -1,12 +1,14 @@
 import type { FilterFields } from '$lib/filterQuery';
 import type { ExpectationDto } from '$lib/schemas/expectation';
 import type { SourceSummary } from '$lib/schemas/table';
-import { drawing } from '$lib/strings/drawing';
 import { drawingFile as words } from '$lib/strings/drawingFile';
+import { formatFor } from '$lib/strings/format';
 import { root as rootWords } from '$lib/strings/root';
 import { sourceName } from '$lib/strings/source';
 import type { RootShape } from '../table/rootShape';
 
+/** A file is read by others than the one who chose the units of the screen. */
+const format = formatFor();
 /** Below this a sequence is not named in the file of a drawing: it is not to be seen there either. */
 const NAMED_FROM = 0.005;
 
@@ -22,7 +24,7 @@ export function drawingNotes(
 	const figures = [...expectation.sequences]
 		.sort((a, b) => b.mean - a.mean)
 		.filter(({ mean }) => mean >= NAMED_FROM)
-		.map(({ sequence, mean, interval }) => `${sequence}: ${drawing.expectation.probability(mean, interval)}`);
+		.map(({ sequence, mean, interval }) => `${sequence}: ${format.figure(mean, interval)}`);
 	const placed = [
 		{ name: rootWords.lengthFrom, at: shape.length },
 		{ name: rootWords.levelFrom, at: shape.confluence }

@@ -14,7 +14,8 @@ const literature = fileURLToPath(new URL('../../../../data/literature/', import.
 beforeAll(async () => {
 	environment.DATA_DIR = temporaryFolder();
 	await seedLiterature(await serverDatabase(), await readLiteratureFiles(literature));
-});
+	// The whole shipped table is read: seconds, and more on a busy machine.
+}, 60_000);
 afterAll(closeDatabase);
 
 const hits = async (query: string, limit = 8) => (await search(query, 'iso', limit)).hits;
