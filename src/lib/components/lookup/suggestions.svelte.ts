@@ -48,6 +48,8 @@ export class Suggestions {
 			this.showRecent();
 			return;
 		}
+		// Recent look-ups answer nothing that was typed: one taken by mistake would lead astray.
+		if (this.answered === '') this.open = false;
 		this.#timer = setTimeout(() => void this.#load(query), PAUSE_MS);
 	}
 

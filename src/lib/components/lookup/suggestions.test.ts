@@ -70,6 +70,14 @@ describe('suggestions', () => {
 		expect(list.open).toBe(false);
 	});
 
+	it('takes recent look-ups away as soon as something is typed', () => {
+		const list = new Suggestions(() => Promise.resolve(HITS));
+		list.items = [{ kind: 'recent', title: 'a', detail: '', address: '/a' }];
+		list.open = true;
+		list.typed('m');
+		expect(list.open).toBe(false);
+	});
+
 	it('closes without a complaint when the server cannot answer', async () => {
 		const list = new Suggestions(() => Promise.reject(new Error('offline')));
 		await typed(list, 'molar');
