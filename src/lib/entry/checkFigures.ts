@@ -2,9 +2,10 @@
 import { formatSequence, parseSequence, SequenceError } from '$lib/anatomy/sequence';
 import type { MEASURES } from '$lib/schemas/terms';
 import { checks as words } from '$lib/strings/checks';
-import type { Remarks } from './checks';
+
 import type { FigureContent, FigureText } from './content';
 import { percentage, roundingOf, wholeNumber } from './numbers';
+import type { Remarks } from './remarks';
 
 type Measure = (typeof MEASURES)[number];
 
@@ -69,7 +70,9 @@ function checkCategory(typed: string, measure: Measure | null, path: string, rem
 		case 'extra-canal-confluence':
 			if (!JOINING.includes(category)) remarks.error(path, words.joining);
 			return category;
-		default:
+		case 'canal-count':
+		case 'root-count':
+		case 'foramen-count':
 			if (!COUNTED.test(category)) remarks.error(path, words.counted);
 			return category;
 	}

@@ -16,16 +16,8 @@ import { isCountryCode } from '$lib/strings/countries';
 import { checks as words } from '$lib/strings/checks';
 import { checkFigures } from './checkFigures';
 import { wholeNumber } from './numbers';
+import { Remarks, type Remark } from './remarks';
 import { sameSample, type EntryContent, type EntryText } from './content';
-
-export type RemarkLevel = 'error' | 'warning' | 'note';
-
-/** Something to say of one field. `path` is dotted: `total`, `figures` for the list as a whole, `figures.2.count`. */
-export interface Remark {
-	level: RemarkLevel;
-	path: string;
-	message: string;
-}
 
 /** What an entry is compared with; an absent part leaves its check out. */
 export interface CheckContext {
@@ -46,17 +38,6 @@ export interface Checked {
 /** Longest texts; those of the shipped table stay far below. */
 const LONGEST = { source: 200, locator: 300, scope: 200, subgroup: 100 } as const;
 const MULTI = 'multi';
-
-/** Collects remarks. */
-export class Remarks {
-	readonly list: Remark[] = [];
-	error = (path: string, message: string) => void this.list.push({ level: 'error', path, message });
-	warning = (path: string, message: string) => void this.list.push({ level: 'warning', path, message });
-	note = (path: string, message: string) => void this.list.push({ level: 'note', path, message });
-	get failed(): boolean {
-		return this.list.some(({ level }) => level === 'error');
-	}
-}
 
 /** Checks an entry; see the head of this file. Never throws for anything typed. */
 export function checkEntry(text: EntryText, context: CheckContext = {}): Checked {

@@ -55,5 +55,10 @@ export const checks = {
 	newClass: (sequence: string) =>
 		`No published entry of this root has ever shown ${sequence}. Check that it is not a slip.`,
 	sameSample: (id: number) =>
-		`The same sample stands in entry ${id} already, with figures for the same measure.`
+		`The same sample stands in entry ${id} already, with figures for the same measure.`,
+	positive: (most: number) => `Write a number above 0, at most ${count(most)}, such as 17 or 0.5.`,
+	basis: (list: readonly string[]) => `Say what it rests on: ${list.join(', ')}.`,
+	basisNeedsSource: 'Name the source: a published or derived value has one.',
+	assumedWithSource: 'An assumed value names no source; if one gives it, it is published or derived.',
+	assumed: 'Assumed: shown as such wherever it is used.'
 };

@@ -11,6 +11,14 @@ export const desk = {
 		own: 'You have written in it yourself: somebody else has to check it.',
 		'not-own': 'Only somebody who has written in it may take it back.'
 	},
+	needs: {
+		reasons: 'Say why it goes back: at least one reason.',
+		reason: 'Say why.',
+		revision: 'Say which revision.',
+		locator: 'Say where in the source the figures stand.',
+		poolable: 'Say whether the sample is pooled.',
+		ifMatch: 'Send If-Match with the number of the revision you edited, in quotes.'
+	},
 	why: {
 		created: 'New draft.',
 		saved: 'Draft saved.',
@@ -26,6 +34,8 @@ export const desk = {
 			`${poolable === null ? 'Pooled or not as its scope says' : poolable ? 'Marked to be pooled' : 'Marked not to be pooled'}: ${reason}`
 	},
 	record: {
+		characteristic: (finding: string, parameter: string, group: string) =>
+			`The characteristic of a finding was changed: ${finding}, ${parameter}, ${group}.`,
 		published: (id: number, replaced: boolean) =>
 			replaced ? `Entry ${id} was corrected.` : `Entry ${id} was published.`,
 		withdrawn: (id: number, reason: string) => `Entry ${id} was withdrawn: ${reason}`,
