@@ -5,6 +5,8 @@ import type { EntryContent } from './content';
 export interface ContextData {
 	/** What the data is about: after a change of one of these it holds no more. */
 	about: { source: string; tooth: string; root: string };
+	/** The entry's own id, which is not compared; null for a new one. */
+	self: number | null;
 	/** Whether the table has the source. */
 	sourceKnown: boolean;
 	/** Canal sequences that published entries of the root show; null where there is none. */

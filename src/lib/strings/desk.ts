@@ -2,6 +2,7 @@
 export const desk = {
 	unknown: 'There is no such entry.',
 	nothing: 'nothing',
+	noAction: 'There is no such action.',
 	stale: (who: string) => `${who} has saved this meanwhile. Compare the two versions and choose.`,
 	staleAt: (yours: string, theirs: string) =>
 		`Yours: ${yours || 'empty'}. Saved meanwhile: ${theirs || 'empty'}.`,

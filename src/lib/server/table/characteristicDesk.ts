@@ -94,7 +94,7 @@ export async function characteristicRevisions(name: string) {
 	const rows = await CharacteristicRevision.findAll({ where: { name }, order: ['number'] });
 	return rows.map(({ number, at, who, why, before, after }) => ({
 		...{ number, at, who, why, state: (JSON.parse(after) as Recorded).state },
-		before: before && contentOf(JSON.parse(before) as Recorded),
+		before: before === null ? null : contentOf(JSON.parse(before) as Recorded),
 		after: contentOf(JSON.parse(after) as Recorded)
 	}));
 }

@@ -35,7 +35,7 @@ export async function contextFor(
 		if (entry && (entry.work || entry.standing === 'published')) others.push({ id, content: entry.content });
 	}
 	const sourceKnown = (await Source.count({ where: { id: about.source } })) > 0;
-	return { about, sourceKnown, shown: await shownSequences(db, tooth, root), others };
+	return { about, self, sourceKnown, shown: await shownSequences(db, tooth, root), others };
 }
 
 async function shownSequences(db: Sequelize, tooth: string, root: string): Promise<string[] | null> {
