@@ -52,7 +52,7 @@ const figureSchema = z.object({
 	note: z.string()
 });
 
-const entrySchema = z.object({
+export const entrySchema = z.object({
 	id: z.number().int(),
 	source: z.string(),
 	title: z.string().nullable(),
@@ -85,7 +85,7 @@ const pageFields = {
 
 export const entriesSchema = z.object({ entries: z.array(entrySchema), ...pageFields });
 
-const revisionSchema = z.object({
+export const revisionSchema = z.object({
 	number: z.number().int(),
 	at: z.iso.datetime(),
 	who: z.string(),

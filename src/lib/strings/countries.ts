@@ -77,3 +77,6 @@ export function everyNameOf(code: string): string[] {
 	);
 	return [...new Set([...inLanguages, ...(EVERYDAY[code] ?? []), code])];
 }
+
+/** Whether a code is a country's own, ISO 3166-1 alpha-3 or XKX. */
+export const isCountryCode = (code: string): boolean => alpha2.has(code);

@@ -1,5 +1,5 @@
 /** Features of the evidence files in words. */
-const names: Record<string, string> = {
+export const featureNames: Record<string, string> = {
 	mb2: 'Second mesiobuccal canal (MB2)',
 	'middle-mesial': 'Middle mesial canal',
 	'middle-distal': 'Middle distal canal',
@@ -26,5 +26,5 @@ const names: Record<string, string> = {
 
 /** The name of a feature; one that has none here is shown as the table writes it. */
 export function featureName(id: string): string {
-	return names[id] ?? id.replaceAll('-', ' ');
+	return featureNames[id] ?? id.replaceAll('-', ' ');
 }

@@ -17,7 +17,7 @@ export const placeOf = (entry: Pick<EntryDto, 'tooth' | 'root'>) =>
 	`${toothOf(entry.tooth)?.name ?? words.pooledTeeth}, ${entry.root}`;
 
 /** The note all figures share, said once; null where they differ. */
-export const sharedNote = ({ figures }: EntryDto) =>
+export const sharedNote = ({ figures }: Pick<EntryDto, 'figures'>) =>
 	figures.every(({ note }) => note === figures[0].note) ? figures[0]?.note || null : null;
 
 /** The share of a category: worked out where count and total are known, else as printed. Empty where neither is. */

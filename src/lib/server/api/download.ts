@@ -1,8 +1,11 @@
 import type { EntryFilters } from '$lib/schemas/table';
 import { serverDatabase } from '../db/server';
+import { numberOfPath } from './ifMatch';
+import { Problem } from './problem';
 import { checkEntryFilters } from '../table/entryFilters';
 import { CITATION_FILES, cite } from '../table/citations';
 import { citationsOf } from '../table/sources';
+import { findTableRevision, pastCsv, pastJson } from '../table/pastTables';
 import { LICENCE_NOTE, publishedRevision, tableCsv, tableJson } from '../table/wholeTable';
 
 /** Sources cited between two looks at what else waits: a bibliography of thousands must hold nobody up. */
@@ -36,22 +39,37 @@ export async function downloadTable(filters: EntryFilters, ending: 'csv' | 'json
 	await checkEntryFilters(db, filters);
 	const published = await publishedRevision();
 	const part = Object.keys(filters).length > 0 ? '-part' : '';
-	const name = `watersmeet-table${part}-revision-${published.revision}-${published.date.slice(0, 10)}`;
-	const headers = {
+	const pieces =
+		ending === 'csv' ? tableCsv(db, filters, published.revision) : tableJson(db, filters, published);
+	return tableFile(pieces, published, part, ending);
+}
+
+/**
+ * The table as it stood at one of its revisions.
+ * @throws Problem 404 for a number it never had
+ */
+export async function downloadPastTable(number: string, ending: 'csv' | 'json'): Promise<Response> {
+	const revision = numberOfPath(number);
+	const then = revision === null ? null : await findTableRevision(revision);
+	if (!then) throw new Problem(404, 'The table never had this revision.');
+	const db = await serverDatabase();
+	return tableFile(ending === 'csv' ? pastCsv(db, then) : pastJson(db, then), then, '', ending);
+}
+
+function tableFile(
+	pieces: AsyncGenerator<string, void>,
+	{ revision, date }: { revision: number; date: string },
+	part: string,
+	ending: 'csv' | 'json'
+): Response {
+	const name = `watersmeet-table${part}-revision-${revision}-${date.slice(0, 10)}`;
+	return streamed(pieces, {
 		'content-disposition': `attachment; filename="${fileName(name, ending)}"`,
-		'last-modified': new Date(published.date).toUTCString(),
-		'x-table-revision': String(published.revision),
-		'x-table-licence': LICENCE_NOTE
-	};
-	return ending === 'csv'
-		? streamed(tableCsv(db, filters, published.revision), {
-				...headers,
-				'content-type': 'text/csv; charset=utf-8; header=present'
-			})
-		: streamed(tableJson(db, filters, published), {
-				...headers,
-				'content-type': 'application/json'
-			});
+		'last-modified': new Date(date).toUTCString(),
+		'x-table-revision': String(revision),
+		'x-table-licence': LICENCE_NOTE,
+		'content-type': ending === 'csv' ? 'text/csv; charset=utf-8; header=present' : 'application/json'
+	});
 }
 
 /** The citations of all sources, or of those that words leave, as a file to keep. */

@@ -3,6 +3,14 @@ import type { Role, Scope } from '$lib/schemas/terms';
 import { filtersQuerySchema } from '$lib/schemas/common';
 import { confluenceRequestSchema, confluenceResponseSchema } from '$lib/schemas/confluence';
 import { tableCoverageSchema } from '$lib/schemas/coverage';
+import {
+	deskEntrySchema,
+	entryBodySchema,
+	entryDeleteSchema,
+	entryPatchSchema,
+	tableRevisionsQuerySchema,
+	tableRevisionsSchema
+} from '$lib/schemas/entries';
 import { expectationSchema } from '$lib/schemas/expectation';
 import { levelRequestSchema, levelResponseSchema } from '$lib/schemas/level';
 import {
@@ -31,7 +39,9 @@ import { teethSchema, toothSchema } from '$lib/schemas/teeth';
 
 /** One operation of the API, as the OpenAPI document describes it and as its endpoint validates it. */
 export interface Operation {
-	method: 'get' | 'post';
+	method: 'get' | 'post' | 'patch' | 'delete';
+	/** Whether If-Match must name the revision that is edited. */
+	ifMatch?: boolean;
 	path: string;
 	id: string;
 	summary: string;
@@ -57,6 +67,9 @@ export interface Operation {
 }
 
 const slug = { tooth: 'maxillary-first-molar', root: 'MB' };
+
+/** Who keeps the table. */
+const EDUCATOR = { role: 'educator', scope: 'table:write' } as const;
 
 /** Every operation of version 1, in the order the document lists them. */
 export const operations: Operation[] = [
@@ -109,6 +122,91 @@ export const operations: Operation[] = [
 		exampleParameters: { id: '1' },
 		summary: 'One entry with its revisions',
 		response: entryWithRevisionsSchema,
+		failures: [404]
+	},
+	{
+		method: 'post',
+		path: '/entries',
+		id: 'createEntry',
+		summary: 'Makes a draft of a new entry; somebody else has to publish it',
+		access: EDUCATOR,
+		body: entryBodySchema,
+		example: {
+			...{ source: 'weine-1969', locator: 'table 1', provenance: 'read', tooth: slug.tooth, root: slug.root },
+			...{
+				scope: 'all',
+				country: 'USA',
+				method: 'sectioning',
+				subgroup: 'all',
+				total: 208,
+				measure: 'feature'
+			},
+			figures: [{ category: 'mb2', count: 107 }]
+		},
+		response: deskEntrySchema,
+		failures: [400, 413, 415, 422]
+	},
+	{
+		method: 'patch',
+		path: '/entries/{id}',
+		id: 'changeEntry',
+		exampleParameters: { id: '1' },
+		summary:
+			'Saves a draft, of a published entry beside it, or moves it on: review, return, publication by another, restoring a revision, ' +
+			'confirmation of recalled figures, a mark on its sample. 409 names the parts that somebody has changed meanwhile',
+		access: EDUCATOR,
+		ifMatch: true,
+		body: entryPatchSchema,
+		example: { action: 'save', changes: { locator: 'table 2' } },
+		response: deskEntrySchema,
+		failures: [400, 404, 409, 413, 415, 422, 428]
+	},
+	{
+		method: 'delete',
+		path: '/entries/{id}',
+		id: 'withdrawEntry',
+		exampleParameters: { id: '1' },
+		summary: 'Withdraws a published entry, with the reason, or puts a draft away. Its revisions stay',
+		access: EDUCATOR,
+		ifMatch: true,
+		query: entryDeleteSchema,
+		response: deskEntrySchema,
+		failures: [404, 409, 422, 428]
+	},
+	{
+		method: 'get',
+		path: '/entries/{id}/draft',
+		id: 'getDraft',
+		exampleParameters: { id: '1' },
+		summary:
+			'An entry as those see it who work on it: its draft, what the checks say of it, and every revision',
+		access: EDUCATOR,
+		response: deskEntrySchema,
+		failures: [404]
+	},
+	{
+		method: 'get',
+		path: '/table-revisions',
+		id: 'listTableRevisions',
+		summary: 'Revisions of the table: what changed, who checked it, how far the estimates of each root moved',
+		query: tableRevisionsQuerySchema,
+		response: tableRevisionsSchema,
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/table-revisions/{revision}/table.csv',
+		id: 'downloadPastTableCsv',
+		summary: 'The table as it stood at a revision, as CSV',
+		formats: ['text/csv'],
+		failures: [404]
+	},
+	{
+		method: 'get',
+		path: '/table-revisions/{revision}/table.json',
+		id: 'downloadPastTableJson',
+		summary: 'The same as JSON',
+		response: wholeTableSchema,
 		failures: [404]
 	},
 	{

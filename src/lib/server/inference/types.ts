@@ -181,7 +181,7 @@ export interface FindingCharacteristic {
 	betaA: number | null;
 	betaB: number | null;
 	sdMm: number | null;
-	basis: 'derived' | 'assumed';
+	basis: 'published' | 'derived' | 'assumed';
 	sourceIds: string[];
 	note: string;
 }

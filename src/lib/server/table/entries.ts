@@ -66,7 +66,7 @@ export async function listEntries(db: Sequelize, query: EntriesQuery): Promise<E
 	return { ...page, entries: await withFigures(ids.flatMap(({ id }) => byId.get(id) ?? [])) };
 }
 
-/** An entry with its revisions, or null for an unknown or unpublished id. */
+/** An entry with the revisions everybody may see, or null for an unknown id or one that was never published. */
 export async function findEntry(db: Sequelize, id: number) {
 	const rows = await db.query<EntryRow>(
 		`SELECT ${COLUMNS} ${FROM} WHERE entry.id = $id AND entry.state IN ('published', 'withdrawn')`,
@@ -74,19 +74,22 @@ export async function findEntry(db: Sequelize, id: number) {
 	);
 	const [entry] = await withFigures(rows);
 	if (!entry) return null;
+	// Drafts are the desk's own.
+	const revisions = (await revisionsOf(id)).filter(({ after }) =>
+		['published', 'withdrawn'].includes((after as { state: string }).state)
+	);
+	return revisions.length === 0 ? null : { ...entry, revisions };
+}
+
+/** All revisions of an entry, drafts too, the first first. */
+export async function revisionsOf(id: number) {
 	const revisions = await Revision.findAll({ where: { entryId: id }, order: [['number', 'ASC']] });
 	const read = (text: string | null): unknown => (text === null ? null : JSON.parse(text));
-	return {
-		...entry,
-		revisions: revisions.map(({ number, at, who, why, before, after }) => ({
-			number,
-			at,
-			who,
-			why,
-			before: read(before),
-			after: read(after)
-		}))
-	};
+	return revisions.map(({ number, at, who, why, before, after }) => ({
+		...{ number, at, who, why },
+		before: read(before),
+		after: read(after)
+	}));
 }
 
 /** Published entries of one source, by tooth and root. */

@@ -1,5 +1,7 @@
-import type { ModelStatic, Model, Sequelize } from 'sequelize';
+import { Op, type ModelStatic, type Model, type Sequelize } from 'sequelize';
+import { characteristicName } from '$lib/entry/characteristic';
 import type { Provenance } from '../db/models/literature';
+import { CharacteristicRevision } from '../db/models/desk';
 import { Characteristic, Diagnostic, Measurement, Standard } from '../db/models/supplements';
 import type { CsvRow, LiteratureFiles } from './literatureFiles';
 import { describeUnplaced, numberOrNull, whyNotCited, type Unplaced } from './plan';
@@ -25,12 +27,19 @@ export async function replaceSupplements(
 			'finding-characteristics.csv',
 			files.characteristics,
 			(cells) => whyNotCharacteristic(cells, sources, parameters),
-			toCharacteristic
+			toCharacteristic,
+			await editedCharacteristics()
 		))
 	];
 }
 
 type Row = Record<string, string | number | null>;
+
+/** Rows that stay as they are, whatever the file says. */
+interface Keep {
+	ids: number[];
+	has: (row: Row) => boolean;
+}
 
 async function replace(
 	db: Sequelize,
@@ -38,7 +47,8 @@ async function replace(
 	file: string,
 	rows: CsvRow[],
 	whyNot: (cells: Record<string, string>) => string | null,
-	convert: (cells: Record<string, string>) => Row
+	convert: (cells: Record<string, string>) => Row,
+	keep: Keep = { ids: [], has: () => false }
 ): Promise<Unplaced[]> {
 	const placed: Row[] = [];
 	const unplaced: Unplaced[] = [];
@@ -47,13 +57,25 @@ async function replace(
 		const notANumber = Object.entries(values).find(([, value]) => Number.isNaN(value));
 		const reason = whyNot(row.cells) ?? (notANumber ? `${notANumber[0]} is not a number.` : null);
 		if (reason) unplaced.push(describeUnplaced(file, row, reason));
-		else placed.push(values);
+		else if (!keep.has(values)) placed.push(values);
 	}
 	await db.transaction(async (transaction) => {
-		await model.destroy({ where: {}, transaction });
+		await model.destroy({ where: { id: { [Op.notIn]: keep.ids } }, transaction });
 		await model.bulkCreate(placed, { transaction });
 	});
 	return unplaced;
+}
+
+/** Characteristics that people have published since. */
+async function editedCharacteristics(): Promise<Keep> {
+	const revisions = await CharacteristicRevision.findAll({ attributes: ['name'], group: ['name'] });
+	const names = new Set(revisions.map(({ name }) => name));
+	const rows = (await Characteristic.findAll()).filter((row) => names.has(characteristicName(row)));
+	const kept = new Set(rows.map(characteristicName));
+	return {
+		ids: rows.map(({ id }) => id),
+		has: (row) => kept.has(characteristicName(row as unknown as Characteristic))
+	};
 }
 
 /** @param parameters those that earlier rows gave; this row's is added if it can be placed */
@@ -65,8 +87,9 @@ function whyNotCharacteristic(
 	const ids = cells.source_ids.split(';').filter(Boolean);
 	const missing = ids.find((id) => !sources.has(id));
 	if (missing) return `The source ${missing} is not among the sources.`;
-	if (cells.basis === 'derived' && ids.length === 0) return 'A derived value must name its sources.';
-	if (!['derived', 'assumed'].includes(cells.basis)) return `The basis "${cells.basis}" is unknown.`;
+	if (cells.basis !== 'assumed' && ids.length === 0) return `A ${cells.basis} value must name its sources.`;
+	if (!['published', 'derived', 'assumed'].includes(cells.basis))
+		return `The basis "${cells.basis}" is unknown.`;
 	const notPositive = ['beta_a', 'beta_b', 'sd_mm'].find((column) => {
 		const value = numberOrNull(cells[column]);
 		return value !== null && !(value > 0);

@@ -63,7 +63,7 @@ export class Characteristic extends Model<
 	declare betaA: number | null;
 	declare betaB: number | null;
 	declare sdMm: number | null;
-	declare basis: 'derived' | 'assumed';
+	declare basis: 'published' | 'derived' | 'assumed';
 	/** Source ids joined by `;`, empty for an assumed value. */
 	declare sourceIds: string;
 	declare note: string;
