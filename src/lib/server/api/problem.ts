@@ -14,6 +14,7 @@ const TITLES: Record<number, string> = {
 	413: 'The request is too large',
 	415: 'Unsupported content type',
 	422: 'A value is out of range',
+	428: 'Say which revision was edited',
 	429: 'Too many requests',
 	500: 'Something went wrong here',
 	503: 'Not ready yet'

@@ -22,7 +22,9 @@ describe('the environment', () => {
 			ORIGIN: 'http://localhost:3000',
 			DATA_DIR: path.resolve('/srv/watersmeet/data/runtime'),
 			LITERATURE_DIR: path.resolve('/srv/watersmeet/data/literature'),
-			BODY_SIZE_LIMIT: '2M',
+			BODY_SIZE_LIMIT: '22M',
+			BACKUP_DIR: path.resolve('/srv/watersmeet/data/runtime/backups'),
+			BACKUP_KEEP: 14,
 			RATE_LIMIT_PER_MINUTE: 1200,
 			LOG_LEVEL: 'info',
 			SHUTDOWN_TIMEOUT: 30
@@ -31,7 +33,7 @@ describe('the environment', () => {
 
 	it('takes an empty string as unset, and leaves names it does not know alone', () => {
 		const names = Object.keys(read({}));
-		const empty = Object.fromEntries([...names, 'ADDRESS_HEADER'].map((name) => [name, '']));
+		const empty = Object.fromEntries([...names, 'ADDRESS_HEADER', 'CROSSREF_URL'].map((name) => [name, '']));
 		expect(read({ ...empty, PATH: '/usr/bin' })).toEqual(read({}));
 	});
 
@@ -70,6 +72,9 @@ describe('the environment', () => {
 		['ORIGIN', 'ftp://canals.example.org'],
 		['BODY_SIZE_LIMIT', '2 MB'],
 		['BODY_SIZE_LIMIT', '-1'],
+		['CROSSREF_URL', 'crossref'],
+		['BACKUP_KEEP', '-1'],
+		['BACKUP_KEEP', 'all'],
 		['RATE_LIMIT_PER_MINUTE', '0'],
 		['RATE_LIMIT_PER_MINUTE', '0.5'],
 		['RATE_LIMIT_PER_MINUTE', 'many'],

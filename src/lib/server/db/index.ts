@@ -2,6 +2,7 @@ import path from 'node:path';
 import type { Sequelize } from 'sequelize';
 import { openDatabase } from './connection';
 import { migrate } from './migrate';
+import { defineIntake } from './models/intake';
 import { defineLiterature } from './models/literature';
 import { defineMail } from './models/mail';
 import { definePeople } from './models/people';
@@ -24,6 +25,7 @@ export async function connect(dataDir: string): Promise<Sequelize> {
 	const sequelize = openDatabase(file);
 	defineLiterature(sequelize);
 	defineSupplements(sequelize);
+	defineIntake(sequelize);
 	definePeople(sequelize);
 	defineMail(sequelize);
 	return sequelize;
