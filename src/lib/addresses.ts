@@ -12,3 +12,8 @@ export function joinAddress(tooth: string, root: string): string {
 export function sourceAddress(id: string): string {
 	return `/sources/${encodeURIComponent(id)}`;
 }
+
+/** Address of the page of an entry of the table. */
+export function entryAddress(id: number): string {
+	return `/table/${id}`;
+}

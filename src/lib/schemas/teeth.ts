@@ -73,6 +73,7 @@ const measurementSchema = z.object({
 	min: z.number().nullable(),
 	max: z.number().nullable(),
 	unit: z.string(),
+	provenance: z.enum(['read', 'secondary', 'memory']),
 	verified: z.boolean().describe('False: recalled, not seen in the source'),
 	note: z.string()
 });

@@ -19,6 +19,36 @@ export const METHODS = [
 /** Methods an estimate can be narrowed to: everything but published reviews, which are never pooled. */
 export const POOLED_METHODS = METHODS.filter((method) => method !== 'review');
 
+/** What an entry's figures count. */
+export const MEASURES = [
+	'configuration',
+	'canal-count',
+	'root-count',
+	'foramen-count',
+	'feature',
+	'confluence',
+	'extra-canal-confluence'
+] as const;
+
+/** What entries can be sorted by. A leading - reverses an order. */
+export const ENTRY_SORTS = [
+	'id',
+	'source',
+	'author',
+	'year',
+	'tooth',
+	'root',
+	'measure',
+	'method',
+	'country',
+	'total'
+] as const;
+/** What sources can be sorted by. */
+export const SOURCE_SORTS = ['id', 'author', 'title', 'year', 'entries'] as const;
+
+/** Filters of the table's entries, by their names in an address. */
+export const ENTRY_FILTERS = ['tooth', 'root', 'measure', 'method', 'country', 'source', 'q'] as const;
+
 /** Names of the filters in an address. The lists among them may repeat. */
 export const FILTER_FIELDS = ['method', 'country', 'yearFrom', 'yearTo', 'minTotal', 'exclude'] as const;
 

@@ -14,6 +14,7 @@ export const api = {
 	body: 'Request',
 	answer: 'Answer',
 	schema: 'Schema (JSON Schema 2020-12)',
+	formats: 'The answer may come as text:',
 	failures: 'Other answers',
 	example: 'Example',
 	run: 'Run the example',

@@ -99,3 +99,19 @@ export function pValue(p: number): string {
 export function count(number: number): string {
 	return whole.format(number);
 }
+
+const day = new Intl.DateTimeFormat(LOCALE, {
+	day: 'numeric',
+	month: 'long',
+	year: 'numeric',
+	timeZone: 'UTC'
+});
+
+/**
+ * The day of a moment, in UTC: `1 December 2026`.
+ *
+ * @param moment ISO 8601
+ */
+export function date(moment: string): string {
+	return day.format(new Date(moment));
+}

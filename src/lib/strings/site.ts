@@ -6,7 +6,10 @@ export const site = {
 	nav: {
 		label: 'Main',
 		teeth: 'Find a tooth',
+		table: 'Table',
+		sources: 'Sources',
 		how: 'How it works',
+		aboutShort: 'About',
 		about: 'What this is and is not'
 	},
 	search: {

@@ -31,7 +31,20 @@ export const source = {
 	totalUnknown: 'total not given',
 	derived: 'count worked out from the percentage',
 	measurements: 'Measurements',
-	csl: 'As CSL-JSON'
+	formats: { vancouver: 'Vancouver', bibtex: 'BibTeX', ris: 'RIS', csl: 'CSL-JSON' },
+	formatsTitle: 'Cite this source',
+	copy: (format: string) => `Copy as ${format}`,
+	copied: 'Copied',
+	copyFailed: 'Could not copy: select the text above instead',
+	download: (format: string) => `Download ${format}`,
+	showText: 'Show the text',
+	inTable: 'These entries in the table',
+	allSources: 'All sources',
+	diagnostics: 'How good tests and images were',
+	standards: 'From the standard',
+	characteristics: 'Starting values of findings that rest on it',
+	derivedFrom: 'worked out from this source and others named with it',
+	betaShape: (a: number, b: number) => `Beta(${a}, ${b})`
 };
 
 /** A source as running text names it: `Vertucci 1984`; without authors by its title, so that nobody takes an id for a name. */

@@ -25,6 +25,7 @@ async function served(): Promise<string[]> {
 }
 
 interface Schema {
+	type?: string;
 	properties?: Record<string, unknown>;
 	$ref?: string;
 }
@@ -91,8 +92,13 @@ describe('the OpenAPI document', () => {
 			);
 			for (const [status, { description, content }] of Object.entries(entry.responses)) {
 				expect(description).toBeTruthy();
-				if (status === '200') expect(content['application/json'].schema.properties).toBeDefined();
-				else expect(content['application/problem+json'].schema.$ref).toBe('#/components/schemas/Problem');
+				if (status === '200') {
+					const types = [...(operation.response ? ['application/json'] : []), ...(operation.formats ?? [])];
+					expect(types.length).toBeGreaterThan(0);
+					expect(Object.keys(content)).toEqual(types);
+					for (const type of types)
+						expect(content[type].schema.type).toBe(type === 'application/json' ? 'object' : 'string');
+				} else expect(content['application/problem+json'].schema.$ref).toBe('#/components/schemas/Problem');
 			}
 			const inPath = [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => name);
 			expect(entry.parameters.filter((one) => one.in === 'path').map(({ name }) => name)).toEqual(inPath);
@@ -115,9 +121,10 @@ describe('the OpenAPI document', () => {
 
 describe('the operations as their page shows them', () => {
 	it('have an example address without a blank to fill in, and schemas that are JSON', () => {
-		for (const { example, requestSchema, answerSchema, method } of describeOperations()) {
+		for (const { example, requestSchema, answerSchema, formats, method } of describeOperations()) {
 			expect(example.address).toMatch(/^\/api\/v1\/[^{}]+$/);
-			expect(JSON.parse(answerSchema)).toHaveProperty('properties');
+			if (answerSchema === null) expect(formats.length).toBeGreaterThan(0);
+			else expect(JSON.parse(answerSchema)).toHaveProperty('properties');
 			expect(requestSchema !== null).toBe(method === 'post');
 			expect(example.body !== null).toBe(method === 'post');
 		}

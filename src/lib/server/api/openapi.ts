@@ -48,7 +48,7 @@ export function openApiDocument(origin: string): Json {
 /** The operations as the page about the API shows them, each with an example that works on the shipped table. */
 export function describeOperations() {
 	return operations.map((operation) => {
-		const { id, method, path, summary, body, response, failures } = operation;
+		const { id, method, path, summary, body, response, formats, failures } = operation;
 		const schema = (of: z.ZodType, io: 'input' | 'output') => JSON.stringify(jsonSchema(of, io), null, 2);
 		return {
 			id,
@@ -66,7 +66,8 @@ export function describeOperations() {
 				description: REASONS[status]
 			})),
 			requestSchema: body ? schema(body, 'input') : null,
-			answerSchema: schema(response, 'output'),
+			answerSchema: response ? schema(response, 'output') : null,
+			formats: formats ?? [],
 			example: {
 				address: `/api/v1${exampleAddress(operation)}`,
 				body: operation.example === undefined ? null : JSON.stringify(operation.example, null, 2)
@@ -110,7 +111,15 @@ function describe(operation: Operation): Json {
 			}
 		}),
 		responses: {
-			'200': { description: 'The answer', content: content(jsonSchema(operation.response, 'output')) },
+			'200': {
+				description: 'The answer',
+				content: {
+					...(operation.response && content(jsonSchema(operation.response, 'output'))),
+					...Object.fromEntries(
+						(operation.formats ?? []).map((type) => [type, { schema: { type: 'string' } }])
+					)
+				}
+			},
 			...failures
 		}
 	};

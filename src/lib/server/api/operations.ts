@@ -6,13 +6,17 @@ import { expectationSchema } from '$lib/schemas/expectation';
 import { levelRequestSchema, levelResponseSchema } from '$lib/schemas/level';
 import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
 import {
+	bibliographyQuerySchema,
 	entriesQuerySchema,
 	entriesSchema,
 	entryWithRevisionsSchema,
 	healthSchema,
+	sourceQuerySchema,
 	sourceSchema,
 	sourcesQuerySchema,
-	sourcesSchema
+	sourcesSchema,
+	tableQuerySchema,
+	wholeTableSchema
 } from '$lib/schemas/table';
 import { teethSchema, toothSchema } from '$lib/schemas/teeth';
 
@@ -28,7 +32,10 @@ export interface Operation {
 	example?: unknown;
 	/** Values of the path for the example; teeth and roots have theirs already. */
 	exampleParameters?: Record<string, string>;
-	response: z.ZodType;
+	/** The answer in JSON; without one the operation answers with text of the types in `formats`. */
+	response?: z.ZodType;
+	/** Media types of text that the answer may come in. */
+	formats?: string[];
 	/** Statuses other than 200 that the operation may answer with, besides 429. */
 	failures: number[];
 }
@@ -102,9 +109,63 @@ export const operations: Operation[] = [
 		path: '/sources/{id}',
 		id: 'getSource',
 		exampleParameters: { id: 'weine-1969' },
-		summary: 'One source with its CSL-JSON',
+		summary: 'One source with its CSL-JSON, or its citation in a format',
+		query: sourceQuerySchema,
 		response: sourceSchema,
+		formats: [
+			'text/plain',
+			'application/x-bibtex',
+			'application/x-research-info-systems',
+			'application/vnd.citationstyles.csl+json'
+		],
 		failures: [404, 422]
+	},
+	{
+		method: 'get',
+		path: '/sources.bib',
+		id: 'downloadSourcesBibtex',
+		summary: 'The citations of all sources, or of those that words find, as BibTeX',
+		query: bibliographyQuerySchema,
+		formats: ['application/x-bibtex'],
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/sources.ris',
+		id: 'downloadSourcesRis',
+		summary: 'The same as RIS',
+		query: bibliographyQuerySchema,
+		formats: ['application/x-research-info-systems'],
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/sources.json',
+		id: 'downloadSourcesCsl',
+		summary: 'The same as CSL-JSON, as the table keeps it',
+		query: bibliographyQuerySchema,
+		formats: ['application/vnd.citationstyles.csl+json'],
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/table.csv',
+		id: 'downloadTableCsv',
+		summary:
+			'The whole published table, or what filters leave, with the columns of the import. Headers and the name of the file give revision ' +
+			'and date. A cell that begins with = + - @, a tab, a carriage return or an apostrophe has an apostrophe in front, which the import takes off again',
+		query: tableQuerySchema,
+		formats: ['text/csv'],
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/table.json',
+		id: 'downloadTableJson',
+		summary: 'The same as JSON, with revision, date and licence note',
+		query: tableQuerySchema,
+		response: wholeTableSchema,
+		failures: [422]
 	},
 	{
 		method: 'post',

@@ -1,15 +1,21 @@
-import { entriesQuerySchema, entriesSchema, entryWithRevisionsSchema } from '$lib/schemas/table';
+import {
+	entriesQuerySchema,
+	entriesSchema,
+	type EntryDto,
+	entryWithRevisionsSchema
+} from '$lib/schemas/table';
+import { ENTRY_SORTS } from '$lib/schemas/terms';
 import type { Sequelize } from 'sequelize';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { temporaryDatabase } from '../../../../tests/support/database';
 import { cslSource, literature, observation } from '../../../../tests/support/madeUpLiterature';
-import { Entry } from '../db/models/literature';
+import { Entry, Sample } from '../db/models/literature';
 import { encodeCursor } from './paging';
 import { entriesOfSource, findEntry, listEntries } from './entries';
 import { seedLiterature } from './seed';
 
 const TEETH = ['maxillary-first-molar', 'mandibular-first-molar', 'maxillary-canine'];
-const SORTS = ['id', 'source', 'tooth', 'year', 'total'];
+const SORTS = ENTRY_SORTS;
 
 /** 30 entries with many ties in every sort key, some years and totals unknown. */
 const MANY = Array.from({ length: 30 }, (_, index) =>
@@ -86,13 +92,29 @@ describe('pages of entries', () => {
 			const entries = pages.flatMap((page) => page.entries);
 			expect(new Set(entries.map(({ id }) => id)).size).toBe(33);
 			// In order: by the key, then by id, an unknown year or total counting as 0.
-			const name = sort.replace('-', '') as 'id' | 'source' | 'tooth' | 'year' | 'total';
+			const name = sort.replace('-', '');
+			// The three sources share their author.
+			const keyOf = (entry: EntryDto) => (name === 'author' ? 'adams' : (entry[name as 'id'] ?? 0));
 			const sign = sort.startsWith('-') ? -1 : 1;
 			const sorted = [...entries].sort((a, b) => {
-				const [x, y] = [a[name] ?? 0, b[name] ?? 0];
+				const [x, y] = [keyOf(a), keyOf(b)];
 				return sign * (x < y ? -1 : x > y ? 1 : a.id - b.id);
 			});
 			expect(entries.map(({ id }) => id)).toEqual(sorted.map(({ id }) => id));
+		}
+	);
+
+	it.each(SORTS.flatMap((sort) => [sort, `-${sort}`]))(
+		'lead back the way they came, each saying where it stands, in the order %s',
+		async (sort) => {
+			const there = await walk({ sort, limit: 7 });
+			expect(there.map(({ position }) => position)).toEqual([1, 8, 15, 22, 29]);
+			const back = [there.at(-1)!];
+			while (back[0].previousCursor !== null && back.length < 100)
+				back.unshift(await list({ sort, limit: 7, cursor: back[0].previousCursor }));
+			expect(back.map(({ entries }) => entries)).toEqual(there.map(({ entries }) => entries));
+			expect(back.map(({ position }) => position)).toEqual([1, 8, 15, 22, 29]);
+			expect(await list({ sort, limit: 7, cursor: there[1].previousCursor! })).toEqual(there[0]);
 		}
 	);
 
@@ -144,22 +166,41 @@ describe('filters of entries', () => {
 
 	it.each([
 		['words of a note', 'curved ROOT', ['page 9']],
+		['words in any order, begun only', 'roo cur', ['page 9']],
+		['words that are not all there', 'curved slate', []],
+		['what stands inside a word', 'urve', []],
 		['a category', '2-1', ['page 11']],
-		['a locator', 'page 1', ['page 10', 'page 11']],
-		['a percent sign, literally', '0 %', ['page 9']],
-		['an underscore, literally', 'e_c', ['page 10']],
+		['a locator in quotes', '"page 1"', ['page 10', 'page 11']],
+		['an underscore as a gap between words', 'snake_case', ['page 10']],
 		['an underscore that stands for nothing else', 'p_ge', []],
 		['a percent sign that stands for nothing else', 'curved%them', []],
-		['a backslash', 'back\\', ['page 10']],
-		['a quote', "'", []],
-		['what looks like a replacement', ':tooth', []]
+		['a backslash as a gap', 'back\\', ['page 10']],
+		['a country by its name', '"page" china', ['page 11']],
+		['an upper tooth', 'upper canine curved', ['page 9']],
+		['signs alone', "' % \\", []],
+		['a lone quote', '"', []],
+		['what looks like an operator', 'curved AND NOT zzzz', []],
+		['another', 'NEAR(curved', []],
+		['a column that is none', 'words:curved', []],
+		['a zero', 'curved\0', ['page 9']],
+		['what looks like a replacement', ':tooth $q', []]
 	])('find %s: %s', async (_, q, found) => {
 		expect(await locators({ q })).toEqual(found);
 	});
 
-	it('find words of a title and an id', async () => {
+	it('find words of a title, with its accents or without, an author, and an id', async () => {
 		expect((await list({ q: 'Årets kanaler' })).total).toBe(10);
+		expect((await list({ q: 'arets' })).total).toBe(10);
 		expect((await list({ q: 'baker-' })).total).toBe(10);
+		expect((await list({ q: 'ADAMS' })).total).toBe(33);
+	});
+
+	it('find samples of several countries by each', async () => {
+		await Sample.update({ country: 'CHN+TUR' }, { where: { country: 'CHN' } });
+		expect(await locators({ country: 'TUR' })).toEqual(['page 11']);
+		expect(await locators({ country: 'CHN+TUR' })).toEqual(['page 11']);
+		expect(await locators({ country: 'N+T' })).toEqual([]);
+		await Sample.update({ country: 'CHN' }, { where: { country: 'CHN+TUR' } });
 	});
 
 	it('find nothing that is not published', async () => {

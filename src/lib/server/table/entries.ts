@@ -1,15 +1,21 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
 import type { EntriesQuery, EntryDto } from '$lib/schemas/table';
 import { Figure, Revision, type EntryState, type Provenance } from '../db/models/literature';
-import { decodeCursor, encodeCursor, likePattern } from './paging';
+import { entryConditions } from './entryConditions';
+import { readPage, type Page } from './paging';
 
-/** Sort keys as SQL; an unknown year or total sorts first. */
+/** Sort keys by their columns of `entry_row`, each with an index. An unknown year or total sorts first. */
 const SORT_SQL: Record<string, string> = {
-	id: 'entry.id',
-	source: 'entry.source_id',
-	tooth: 'sample.tooth',
-	year: 'COALESCE(source.year, 0)',
-	total: 'COALESCE(sample.total, 0)'
+	id: 'entry_row.entry_id',
+	source: 'entry_row.source_id',
+	author: 'entry_row.author',
+	year: 'entry_row.year',
+	tooth: 'entry_row.tooth',
+	root: 'entry_row.root',
+	measure: 'entry_row.measure',
+	method: 'entry_row.method',
+	country: 'entry_row.country',
+	total: 'entry_row.total'
 };
 
 const COLUMNS = `entry.id, entry.source_id AS source, source.title, source.year, entry.locator, sample.tooth, sample.root, sample.scope,
@@ -34,72 +40,30 @@ interface EntryRow {
 	state: EntryState;
 	provenance: Provenance;
 	confirmed: number;
-	sortKey?: string | number;
 }
 
 /** A page of published entries. */
-export interface EntriesPage {
-	entries: EntryDto[];
-	/** Entries that match, over all pages. */
-	total: number;
-	nextCursor: string | null;
-}
+export type EntriesPage = Omit<Page<never>, 'rows'> & { entries: EntryDto[] };
 
 /**
  * Lists published entries, filtered, sorted and cut into pages by key (an entry added meanwhile shifts nothing).
  * @throws Problem 422 for a cursor that is not of this list
  */
 export async function listEntries(db: Sequelize, query: EntriesQuery): Promise<EntriesPage> {
-	const where = ["entry.state = 'published'"];
-	const bind: Record<string, string | number> = {};
-	for (const name of ['tooth', 'root', 'method', 'country'] as const) {
-		if (query[name] === undefined) continue;
-		where.push(`sample.${name} = $${name}`);
-		bind[name] = query[name];
-	}
-	if (query.measure) {
-		where.push('entry.measure = $measure');
-		bind.measure = query.measure;
-	}
-	if (query.source) {
-		where.push('entry.source_id = $source');
-		bind.source = query.source;
-	}
-	if (query.q) {
-		where.push(`(entry.source_id LIKE $q ESCAPE '\\' OR source.title LIKE $q ESCAPE '\\' OR sample.scope LIKE $q ESCAPE '\\'
-			OR entry.locator LIKE $q ESCAPE '\\'
-			OR EXISTS (SELECT 1 FROM figure WHERE figure.entry_id = entry.id
-				AND (figure.note LIKE $q ESCAPE '\\' OR figure.category LIKE $q ESCAPE '\\')))`);
-		bind.q = likePattern(query.q);
-	}
-	const [{ total }] = await db.query<{ total: number }>(
-		`SELECT COUNT(*) AS total ${FROM} WHERE ${where.join(' AND ')}`,
-		{ type: QueryTypes.SELECT, bind }
+	const { where, bind } = entryConditions(query);
+	// Counting, sorting and cutting read the narrow table alone; the rest is fetched for the rows of the page.
+	const { rows: ids, ...page } = await readPage<{ id: number }>(
+		db,
+		{ columns: 'entry_row.entry_id AS id', from: 'entry_row', where, bind },
+		{ sort: query.sort, key: SORT_SQL[query.sort.replace('-', '')], id: 'entry_row.entry_id' },
+		query
 	);
-
-	const descending = query.sort.startsWith('-');
-	const key = SORT_SQL[query.sort.replace('-', '')];
-	const order = descending ? 'DESC' : 'ASC';
-	if (query.cursor) {
-		const cursor = decodeCursor(query.cursor, query.sort);
-		const beyond = descending ? '<' : '>';
-		where.push(`(${key} ${beyond} $afterKey OR (${key} = $afterKey AND entry.id ${beyond} $afterId))`);
-		bind.afterKey = cursor.key;
-		bind.afterId = cursor.id;
-	}
 	const rows = await db.query<EntryRow>(
-		`SELECT ${COLUMNS}, ${key} AS sortKey ${FROM} WHERE ${where.join(' AND ')}
-			ORDER BY ${key} ${order}, entry.id ${order} LIMIT $limit`,
-		{ type: QueryTypes.SELECT, bind: { ...bind, limit: query.limit + 1 } }
+		`SELECT ${COLUMNS} ${FROM} WHERE entry.id IN (SELECT value FROM json_each($ids))`,
+		{ type: QueryTypes.SELECT, bind: { ids: JSON.stringify(ids.map(({ id }) => id)) } }
 	);
-	const page = rows.slice(0, query.limit);
-	const last = page.at(-1);
-	return {
-		entries: await withFigures(page),
-		total,
-		nextCursor:
-			rows.length > query.limit && last ? encodeCursor(query.sort, last.sortKey ?? last.id, last.id) : null
-	};
+	const byId = new Map(rows.map((row) => [row.id, row]));
+	return { ...page, entries: await withFigures(ids.flatMap(({ id }) => byId.get(id) ?? [])) };
 }
 
 /** An entry with its revisions, or null for an unknown or unpublished id. */
@@ -146,7 +110,7 @@ async function withFigures(rows: EntryRow[]): Promise<EntryDto[]> {
 		if (list) list.push(figure);
 		else byEntry.set(figure.entryId, [figure]);
 	}
-	return rows.map(({ confirmed, sortKey: _, ...row }) => ({
+	return rows.map(({ confirmed, ...row }) => ({
 		...row,
 		verified: row.provenance !== 'memory' || confirmed === 1,
 		figures: (byEntry.get(row.id) ?? []).map(({ category, count, percent, countDerived, note }) => ({

@@ -26,6 +26,7 @@ describe('filters of the entries', () => {
 		['a root of the table that the product does not answer for', { root: 'fused' }],
 		['a root that has no entry yet', { root: 'DL' }],
 		['several countries in one sample', { country: 'CHE+DEU' }],
+		['one of them', { country: 'CHE' }],
 		['a source without entries', { source: 'baker-2010' }],
 		['words that nothing has', { q: 'zzzz' }]
 	])('take %s', async (_, query) => {
@@ -36,7 +37,9 @@ describe('filters of the entries', () => {
 		['tooth', '16'],
 		['tooth', 'constructor'],
 		['root', 'maxillary-canine'],
-		['country', 'CHE'],
+		['country', 'FRA'],
+		['country', 'E+D'],
+		['country', ''.padEnd(2, '+')],
 		['source', 'nobody-1900'],
 		['source', '\u0000'],
 		['source', "' OR 1=1 --"]

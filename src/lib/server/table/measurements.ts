@@ -25,6 +25,7 @@ async function list(where: WhereOptions<Measurement>): Promise<MeasurementDto[]>
 		min: row.min,
 		max: row.max,
 		unit: row.unit,
+		provenance: row.provenance,
 		verified: row.provenance !== 'memory',
 		note: row.note
 	}));

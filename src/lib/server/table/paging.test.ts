@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { Problem } from '../api/problem';
-import { decodeCursor, encodeCursor, likePattern } from './paging';
+import { decodeCursor, encodeCursor } from './paging';
 
 // What a database may hold: any text, and numbers that JSON can write.
 const part = fc.oneof(
@@ -51,14 +51,5 @@ describe('a cursor', () => {
 				expect(refusal(text)).toMatchObject({ status: 422 });
 			})
 		);
-	});
-});
-
-describe('likePattern', () => {
-	it('takes the wildcards of SQL and their escape literally', () => {
-		expect(likePattern('MB')).toBe('%MB%');
-		expect(likePattern('50 %')).toBe('%50 \\%%');
-		expect(likePattern('a_b')).toBe('%a\\_b%');
-		expect(likePattern('back\\slash')).toBe('%back\\\\slash%');
 	});
 });

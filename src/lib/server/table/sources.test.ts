@@ -58,13 +58,37 @@ describe('sources in pages', () => {
 		await expect(list({ cursor: encodeCursor('year', 2001, 3) })).rejects.toMatchObject({ status: 422 });
 	});
 
-	it('are found by id, author and DOI, wildcards taken literally', async () => {
-		expect(await found('adams-')).toEqual(['adams-2001']);
+	it('are found by author, society, DOI, title, journal and year', async () => {
 		expect(await found('Ørsted')).toEqual(['three']);
 		expect(await found('society of roots')).toEqual(['two']);
-		expect(await found('a_b')).toEqual(['two']);
-		expect(await found('many_0')).toEqual([]);
+		expect(await found('10.1000/a_b')).toEqual(['two']);
+		expect(await found('curie 2001')).toEqual(['three']);
+		expect(await found('"as three saw"')).toEqual(['three']);
+		expect((await list({ q: 'journal of roots', limit: 50 })).total).toBe(24);
 		expect(await found('%')).toEqual([]);
+	});
+
+	it('are not found by the names of CSL keys', async () => {
+		for (const key of ['container', 'family', 'given', 'issued', 'date-parts', 'article-journal'])
+			expect(await found(key), key).toEqual([]);
+	});
+
+	it('stay found after they were completed', async () => {
+		await Source.update({ title: 'Completed since', year: 1999 }, { where: { id: 'bare' } });
+		expect(await found('completed 1999')).toEqual(['bare']);
+		await Source.update({ title: null, year: null }, { where: { id: 'bare' } });
+		expect(await found('completed')).toEqual([]);
+	});
+
+	it('are sorted by author as screens name them, by year, title and number of entries', async () => {
+		const ids = async (sort: string) => (await list({ sort, limit: 50 })).sources.map(({ id }) => id);
+		const byAuthor = await ids('author');
+		// "Adams …", then the one that has no name but its id, then Ø with O.
+		expect(byAuthor.slice(-2)).toEqual(['bare', 'three']);
+		expect(await ids('-author')).toEqual([...byAuthor].reverse());
+		expect((await ids('year'))[0]).toBe('bare');
+		expect((await ids('-entries'))[0]).toBe('adams-2001');
+		expect((await ids('title'))[0]).toBe('bare');
 	});
 });
 

@@ -1,11 +1,19 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
-import type { z } from 'zod';
-import type { SourceDto, SourceSummary, sourcesQuerySchema } from '$lib/schemas/table';
+import type { SourceDto, SourcesQuery, SourceSummary } from '$lib/schemas/table';
 import { serverDatabase } from '../db/server';
 import type { CslSource } from './literatureFiles';
-import { decodeCursor, encodeCursor, likePattern } from './paging';
+import { readPage, type Page } from './paging';
+import { matchExpression } from './searchWords';
 
-const ORDER = 'id';
+const ENTRIES = `(SELECT COUNT(*) FROM entry_row WHERE entry_row.state = 'published' AND entry_row.source_id = source.id)`;
+/** Sort keys as SQL; an unknown year sorts first. */
+const SORT_SQL: Record<string, string> = {
+	id: 'source.id',
+	author: 'source_row.author',
+	title: 'source_row.title',
+	year: 'COALESCE(source_row.year, 0)',
+	entries: ENTRIES
+};
 
 interface SourceRow {
 	id: string;
@@ -19,45 +27,51 @@ interface SourceRow {
 	entries: number;
 }
 
-const SELECT = `SELECT source.id, source.csl, source.title, source.year, source.journal, source.doi, source.citable, source.retracted,
-	(SELECT COUNT(*) FROM entry WHERE entry.source_id = source.id AND entry.state = 'published') AS entries FROM source`;
+const COLUMNS = `source.id, source.csl, source.title, source.year, source.journal, source.doi, source.citable, source.retracted,
+	${ENTRIES} AS entries`;
+const FROM = 'source JOIN source_row ON source_row.source_id = source.id';
+
+/** A page of sources. */
+export type SourcesPage = Omit<Page<never>, 'rows'> & { sources: SourceSummary[] };
 
 /**
- * Lists sources by id, in pages.
+ * Lists sources in pages.
  * @throws Problem 422 for a cursor that is not of this list
  */
-export async function listSources(db: Sequelize, query: z.infer<typeof sourcesQuerySchema>) {
-	const where = ['1 = 1'];
-	const bind: Record<string, string | number> = {};
-	if (query.q) {
-		// The CSL text holds authors, journal and identifiers as well.
-		where.push("(source.id LIKE $q ESCAPE '\\' OR source.csl LIKE $q ESCAPE '\\')");
-		bind.q = likePattern(query.q);
-	}
-	const [{ total }] = await db.query<{ total: number }>(
-		`SELECT COUNT(*) AS total FROM source WHERE ${where.join(' AND ')}`,
+export async function listSources(db: Sequelize, query: SourcesQuery): Promise<SourcesPage> {
+	const { rows, ...page } = await readPage<SourceRow>(
+		db,
+		{ columns: COLUMNS, from: FROM, ...sourceConditions(query.q) },
+		{ sort: query.sort, key: SORT_SQL[query.sort.replace('-', '')], id: 'source.id' },
+		query
+	);
+	return { ...page, sources: rows.map(toSourceSummary) };
+}
+
+/** Which sources words leave, as SQL over `source_row`. */
+function sourceConditions(q: string | undefined): { where: string[]; bind: Record<string, string> } {
+	if (!q) return { where: ['1 = 1'], bind: {} };
+	const words = matchExpression(q);
+	if (words === null) return { where: ['1 = 0'], bind: {} };
+	return {
+		where: ['source_row.id IN (SELECT rowid FROM source_search WHERE source_search MATCH $words)'],
+		bind: { words }
+	};
+}
+
+/** CSL-JSON of the sources that words leave, or of all, by author; as many as a bibliography takes in. */
+export async function citationsOf(db: Sequelize, q: string | undefined): Promise<CslSource[]> {
+	const { where, bind } = sourceConditions(q);
+	const rows = await db.query<{ csl: string }>(
+		`SELECT source.csl FROM ${FROM} WHERE ${where.join(' AND ')} ORDER BY source_row.author, source.id`,
 		{ type: QueryTypes.SELECT, bind }
 	);
-	if (query.cursor) {
-		where.push('source.id > $after');
-		bind.after = String(decodeCursor(query.cursor, ORDER).id);
-	}
-	const rows = await db.query<SourceRow>(
-		`${SELECT} WHERE ${where.join(' AND ')} ORDER BY source.id LIMIT $limit`,
-		{ type: QueryTypes.SELECT, bind: { ...bind, limit: query.limit + 1 } }
-	);
-	const page = rows.slice(0, query.limit);
-	const last = page.at(-1);
-	return {
-		sources: page.map(toSourceSummary),
-		total,
-		nextCursor: rows.length > query.limit && last ? encodeCursor(ORDER, last.id, last.id) : null
-	};
+	return rows.map(({ csl }) => JSON.parse(csl) as CslSource);
 }
 
 /** A source with its CSL-JSON, or null for an unknown id. */
 export async function findSource(db: Sequelize, id: string): Promise<SourceDto | null> {
-	const [row] = await db.query<SourceRow>(`${SELECT} WHERE source.id = $id`, {
+	const [row] = await db.query<SourceRow>(`SELECT ${COLUMNS} FROM source WHERE source.id = $id`, {
 		type: QueryTypes.SELECT,
 		bind: { id }
 	});
@@ -68,7 +82,7 @@ export async function findSource(db: Sequelize, id: string): Promise<SourceDto |
 export async function sourcesById(ids: string[]): Promise<Record<string, SourceSummary>> {
 	if (ids.length === 0) return {};
 	const db = await serverDatabase();
-	const rows = await db.query<SourceRow>(`${SELECT} WHERE source.id IN (:ids)`, {
+	const rows = await db.query<SourceRow>(`SELECT ${COLUMNS} FROM source WHERE source.id IN (:ids)`, {
 		type: QueryTypes.SELECT,
 		replacements: { ids }
 	});

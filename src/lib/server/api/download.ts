@@ -1,0 +1,75 @@
+import type { EntryFilters } from '$lib/schemas/table';
+import { serverDatabase } from '../db/server';
+import { checkEntryFilters } from '../table/entryFilters';
+import { CITATION_FILES, cite } from '../table/citations';
+import { citationsOf } from '../table/sources';
+import { publishedRevision, tableCsv, tableJson } from '../table/wholeTable';
+
+/** Sources cited between two looks at what else waits: a bibliography of thousands must hold nobody up. */
+const CHUNK_SOURCES = 50;
+
+/** Text that is made while it is sent: the next piece when the reader has room for it. */
+function streamed(pieces: AsyncGenerator<string>, headers: Record<string, string>): Response {
+	const encoder = new TextEncoder();
+	const body = new ReadableStream<Uint8Array>({
+		async pull(controller) {
+			const { done, value } = await pieces.next();
+			if (done) controller.close();
+			else controller.enqueue(encoder.encode(value));
+		},
+		async cancel() {
+			await pieces.return(undefined);
+		}
+	});
+	return new Response(body, { headers });
+}
+
+/** A name for a saved file, of letters, digits, dots and hyphens alone. */
+export const fileName = (name: string, ending: string) => `${name.replace(/[^\w.-]+/g, '-')}.${ending}`;
+
+/**
+ * The published table, or what filters leave of it, as a file to keep. Its name, and headers, say of which revision and day it is.
+ * @throws Problem 422 for a filter that names something the table does not have
+ */
+export async function downloadTable(filters: EntryFilters, ending: 'csv' | 'json'): Promise<Response> {
+	const db = await serverDatabase();
+	await checkEntryFilters(db, filters);
+	const published = await publishedRevision();
+	const part = Object.keys(filters).length > 0 ? '-part' : '';
+	const name = `watersmeet-table${part}-revision-${published.revision}-${published.date.slice(0, 10)}`;
+	const headers = {
+		'content-disposition': `attachment; filename="${fileName(name, ending)}"`,
+		'last-modified': new Date(published.date).toUTCString(),
+		'x-table-revision': String(published.revision),
+		link: '</about>; rel="license"'
+	};
+	return ending === 'csv'
+		? streamed(tableCsv(db, filters, published.revision), {
+				...headers,
+				'content-type': 'text/csv; charset=utf-8; header=present'
+			})
+		: streamed(tableJson(db, filters, published), {
+				...headers,
+				'content-type': 'application/json'
+			});
+}
+
+/** The citations of all sources, or of those that words leave, as a file to keep. */
+export async function downloadSources(
+	q: string | undefined,
+	format: 'bibtex' | 'ris' | 'csl'
+): Promise<Response> {
+	const sources = await citationsOf(await serverDatabase(), q);
+	const { type, ending } = CITATION_FILES[format];
+	async function* pieces() {
+		if (format === 'csl') return yield cite(sources, format);
+		for (let start = 0; start < sources.length; start += CHUNK_SOURCES) {
+			yield cite(sources.slice(start, start + CHUNK_SOURCES), format);
+			await new Promise(setImmediate);
+		}
+	}
+	return streamed(pieces(), {
+		'content-type': type,
+		'content-disposition': `attachment; filename="watersmeet-sources.${ending}"`
+	});
+}

@@ -1,0 +1,84 @@
+import { QueryTypes, type Sequelize } from 'sequelize';
+import { stringify } from 'csv-stringify/sync';
+import { OBSERVATION_COLUMNS, type EntryFilters, type Observation } from '$lib/schemas/table';
+import { TableRevision } from '../db/models/literature';
+import { entryConditions } from './entryConditions';
+import { harmlessCell } from './harmlessCells';
+import { tableRevision } from './snapshot';
+
+/** Entries read at a time: what is held in memory however large the table is. */
+const CHUNK_ENTRIES = 500;
+
+/** Said wherever the table leaves the product. */
+export const LICENCE_NOTE =
+	'Figures and bibliographic facts as the sources named in each row published them: cite those sources. ' +
+	'No licence for the compilation itself has been settled yet.';
+
+type Row = Omit<Observation, 'count_derived'> & { count_derived: number; entry: number };
+
+/** The newest revision and when it was published. */
+export async function publishedRevision(): Promise<{ revision: number; date: string }> {
+	const latest = await TableRevision.findOne({ order: [['id', 'DESC']] });
+	return { revision: latest?.id ?? 0, date: latest?.at ?? new Date(0).toISOString() };
+}
+
+/**
+ * The rows of the table, as they would stand in observations.csv, some hundreds at a time in the order of entry and position.
+ * @throws when another revision is published meanwhile: the rows would belong to two tables
+ */
+async function* observations(
+	db: Sequelize,
+	filters: EntryFilters,
+	revision: number
+): AsyncGenerator<Observation[]> {
+	const { where, bind } = entryConditions(filters);
+	for (let after = 0; ;) {
+		const entries = await db.query<{ id: number }>(
+			`SELECT entry_row.entry_id AS id FROM entry_row WHERE ${where.join(' AND ')} AND entry_row.entry_id > $after
+				ORDER BY entry_row.entry_id LIMIT ${CHUNK_ENTRIES}`,
+			{ type: QueryTypes.SELECT, bind: { ...bind, after } }
+		);
+		if (entries.length === 0) return;
+		const rows = await db.query<Row>(
+			`SELECT entry.id AS entry, entry.source_id, entry.locator, sample.tooth, sample.root, sample.scope, sample.country, sample.method,
+				sample.subgroup, entry.measure, figure.category, figure.count, sample.total, figure.percent, figure.count_derived,
+				entry.provenance, figure.note
+			FROM figure JOIN entry ON entry.id = figure.entry_id JOIN sample ON sample.id = entry.sample_id
+			WHERE entry.id IN (SELECT value FROM json_each($ids)) ORDER BY entry.id, figure.position`,
+			{ type: QueryTypes.SELECT, bind: { ids: JSON.stringify(entries.map(({ id }) => id)) } }
+		);
+		if ((await tableRevision()) !== revision) throw new Error('The table was published anew meanwhile.');
+		yield rows.map(({ entry: _, count_derived, ...row }) => ({
+			...row,
+			count_derived: count_derived === 1 ? 'yes' : 'no'
+		}));
+		after = entries[entries.length - 1].id;
+	}
+}
+
+/** The table as CSV text in pieces: the columns of observations.csv, cells made harmless for spreadsheets. */
+export async function* tableCsv(db: Sequelize, filters: EntryFilters, revision: number) {
+	yield stringify([[...OBSERVATION_COLUMNS]]);
+	for await (const rows of observations(db, filters, revision)) {
+		yield stringify(
+			rows.map((row) => OBSERVATION_COLUMNS.map((column) => harmlessCell(String(row[column] ?? '')))),
+			{ quoted_match: /[\r\n]/ }
+		);
+	}
+}
+
+/** The table as JSON text in pieces, with its revision, date and licence note in front. */
+export async function* tableJson(
+	db: Sequelize,
+	filters: EntryFilters,
+	{ revision, date }: { revision: number; date: string }
+) {
+	const head = JSON.stringify({ revision, date, licence: LICENCE_NOTE, filters });
+	yield `${head.slice(0, -1)},"rows":[`;
+	let between = '\n';
+	for await (const rows of observations(db, filters, revision)) {
+		yield rows.map((row, index) => (index === 0 ? between : ',\n') + JSON.stringify(row)).join('');
+		between = ',\n';
+	}
+	yield '\n]}\n';
+}
