@@ -30,6 +30,25 @@ export const MEASURES = [
 	'extra-canal-confluence'
 ] as const;
 
+/** How an entry's figures came here: seen in the source, seen quoted in another one, or recalled and not seen. */
+export const PROVENANCES = ['read', 'secondary', 'memory'] as const;
+
+/** Roots of the evidence files; `whole` counts teeth, `fused` roots grown together. */
+export const ENTRY_ROOTS = [
+	'whole',
+	'single',
+	'B',
+	'P',
+	'L',
+	'MB',
+	'DB',
+	'M',
+	'D',
+	'DL',
+	'ML',
+	'fused'
+] as const;
+
 /** What entries can be sorted by. A leading - reverses an order. */
 export const ENTRY_SORTS = [
 	'id',

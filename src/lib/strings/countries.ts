@@ -54,3 +54,6 @@ export function countriesNamed(beginning: string): string[] {
 			.some((word) => word.startsWith(wanted))
 	);
 }
+
+/** Whether a code is a country's own, ISO 3166-1 alpha-3 or XKX. */
+export const isCountryCode = (code: string): boolean => alpha2.has(code);
