@@ -1,6 +1,8 @@
 import { environment } from './config';
 import { closeDatabase, database } from './db';
 import { estimator, stopEstimator } from './inference/estimator';
+import { recoverImports, stopImports } from './intake/imports';
+import { stopReader } from './intake/reader';
 import { log } from './log';
 import { readLiteratureFiles } from './table/literatureFiles';
 import { seedLiterature } from './table/seed';
@@ -15,6 +17,7 @@ export async function startUp(): Promise<void> {
 	log.info(report, report.changed ? 'literature seeded' : 'literature unchanged');
 	if (report.unplaced > 0)
 		log.warn({ rows: report.unplaced }, 'rows of the literature could not be placed: see /table/not-placed');
+	await recoverImports(db);
 	if (held.watersmeetStops) return;
 	held.watersmeetStops = true;
 	process.once('sveltekit:shutdown' as 'exit', () => void shutDown());
@@ -27,6 +30,8 @@ export async function startUp(): Promise<void> {
 }
 
 async function shutDown(): Promise<void> {
+	await stopImports();
+	await stopReader();
 	await stopEstimator();
 	await closeDatabase();
 	log.info('stopped');
