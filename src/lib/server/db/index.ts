@@ -2,6 +2,7 @@ import path from 'node:path';
 import type { Sequelize } from 'sequelize';
 import { openDatabase } from './connection';
 import { migrate } from './migrate';
+import { defineDesk } from './models/desk';
 import { defineLiterature } from './models/literature';
 import { defineMail } from './models/mail';
 import { definePeople } from './models/people';
@@ -26,6 +27,7 @@ export async function connect(dataDir: string): Promise<Sequelize> {
 	defineSupplements(sequelize);
 	definePeople(sequelize);
 	defineMail(sequelize);
+	defineDesk(sequelize);
 	return sequelize;
 }
 
