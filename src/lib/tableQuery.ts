@@ -30,7 +30,7 @@ export const USUAL_COLUMNS: readonly TableColumn[] = [
 	'country',
 	'standing'
 ];
-export const USUAL_SORT = 'tooth';
+export const USUAL_SORT = 'author';
 export const USUAL_LIMIT = '50';
 
 const NAMES = [...ENTRY_FILTERS, 'sort', 'limit', 'column', 'cursor'];

@@ -15,6 +15,7 @@ import { defineSupplements } from '../../src/lib/server/db/models/supplements';
 import { readSnapshot, type TableSnapshot } from '../../src/lib/server/table/snapshot';
 import { lighthouseMarks } from './screens';
 import { MeasuredServer } from './server';
+import { measureTable } from './table';
 
 const RICHEST = { tooth: 'maxillary-first-molar', root: 'MB' };
 const ROOT_PAGE = `/teeth/${RICHEST.tooth}/${RICHEST.root}`;
@@ -156,6 +157,7 @@ try {
 	await rates(server);
 	await coldAtOnce(server);
 	await lighthouseMarks(server.address, SCREENS, print);
+	await measureTable(server, print);
 } finally {
 	await server.stop();
 }

@@ -15,47 +15,46 @@ const unfold = (page: Page) =>
 			.forEach((details) => (details.open = true))
 	);
 
+/** What sticks out of a page to the right, if anything makes it wider than the window. */
+const overflowing = (page: Page) =>
+	page.evaluate((width) => {
+		if (document.documentElement.scrollWidth <= width) return [];
+		return [...document.querySelectorAll('body *')]
+			.filter((one) => one.getBoundingClientRect().right > width + 1)
+			.slice(0, 8)
+			.map(
+				(one) =>
+					`${one.tagName} ${one.className.toString().slice(0, 60)} ${one.textContent?.trim().slice(0, 40)}`
+			);
+	}, NARROWEST_PX);
+
 // A page that is not there is answered with 404, which the console reports.
 test.use({ expectedMessages: [/status of 404/] });
 
 for (const [name, address] of Object.entries(PAGES)) {
-	for (const colorScheme of ['light', 'dark'] as const) {
-		test(`${name}: axe finds nothing in ${colorScheme}, at 390 and 1440 px`, async ({ page }) => {
-			await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' });
-			test.slow();
-			for (const width of WIDTHS_PX) {
-				await page.setViewportSize({ width, height: 900 });
-				await page.goto(address);
-				await unfold(page);
+	// One visit for all of it: loading and unfolding a page takes as long as looking it over.
+	test(`${name}: axe finds nothing, in light and dark, at 390 and 1440 px; nothing overflows at 320 px`, async ({
+		page
+	}) => {
+		test.slow();
+		await page.emulateMedia({ reducedMotion: 'reduce' });
+		await page.setViewportSize({ width: NARROWEST_PX, height: 900 });
+		await page.goto(address);
+		await unfold(page);
+		expect(await overflowing(page), `${address} at ${NARROWEST_PX} px`).toEqual([]);
+		for (const width of WIDTHS_PX) {
+			await page.setViewportSize({ width, height: 900 });
+			for (const colorScheme of ['light', 'dark'] as const) {
+				await page.emulateMedia({ colorScheme });
 				const { violations, passes } = await new AxeBuilder({ page }).withTags(TAGS).analyze();
 				const found = violations.map(
 					({ id, nodes }) =>
 						`${id}: ${nodes.map(({ html, failureSummary }) => `${html} ${failureSummary}`).join('\n')}`
 				);
-				expect(found, `${address} at ${width} px`).toEqual([]);
+				expect(found, `${address} at ${width} px, ${colorScheme}`).toEqual([]);
 				expect(passes.length).toBeGreaterThan(10);
 			}
-		});
-	}
-
-	test(`${name}: nothing overflows at 320 px`, async ({ page }) => {
-		await page.setViewportSize({ width: NARROWEST_PX, height: 700 });
-		await page.goto(address);
-		await unfold(page);
-		const overflowing = await page.evaluate((width) => {
-			const wider = [...document.querySelectorAll('body *')].filter(
-				(one) => one.getBoundingClientRect().right > width + 1
-			);
-			return document.documentElement.scrollWidth > width
-				? wider
-						.slice(0, 8)
-						.map(
-							(one) =>
-								`${one.tagName} ${one.className.toString().slice(0, 60)} ${one.textContent?.trim().slice(0, 40)}`
-						)
-				: [];
-		}, NARROWEST_PX);
-		expect(overflowing).toEqual([]);
+		}
 	});
 }
 

@@ -4,6 +4,9 @@ import { estimator, stopEstimator } from './inference/estimator';
 import { recoverImports, stopImports } from './intake/imports';
 import { stopReader } from './intake/reader';
 import { log } from './log';
+import { startMailer, stopMailer } from './mail/mailer';
+import { keepHouse } from './people/housekeeping';
+import { makeSetUpLink } from './people/links';
 import { readLiteratureFiles } from './table/literatureFiles';
 import { seedLiterature } from './table/seed';
 
@@ -21,6 +24,9 @@ export async function startUp(): Promise<void> {
 	if (held.watersmeetStops) return;
 	held.watersmeetStops = true;
 	process.once('sveltekit:shutdown' as 'exit', () => void shutDown());
+	keepHouse();
+	await startMailer();
+	await offerSetUp();
 	// Nobody waits for this: it starts the worker, so that the first visitor does not pay for it, and has the table's coverage ready.
 	estimator()
 		.then((current) => current.tableCoverage())
@@ -29,9 +35,19 @@ export async function startUp(): Promise<void> {
 		);
 }
 
+/** Prints the link for the first administrator; on the output and not in the log, which must hold no secret. */
+async function offerSetUp(): Promise<void> {
+	const link = await makeSetUpLink();
+	if (link)
+		process.stdout.write(
+			`Nobody administrates this installation yet. Set it up, once, within a day:\n  ${link}\n`
+		);
+}
+
 async function shutDown(): Promise<void> {
 	await stopImports();
 	await stopReader();
+	await stopMailer();
 	await stopEstimator();
 	await closeDatabase();
 	log.info('stopped');

@@ -115,3 +115,22 @@ const day = new Intl.DateTimeFormat(LOCALE, {
 export function date(moment: string): string {
 	return day.format(new Date(moment));
 }
+
+const dayAndTime = {
+	day: 'numeric',
+	month: 'short',
+	year: 'numeric',
+	hour: '2-digit',
+	minute: '2-digit'
+} as const;
+const inUtc = new Intl.DateTimeFormat(LOCALE, { ...dayAndTime, timeZone: 'UTC' });
+
+/** A moment for readers whose clock is not known: `1 Dec 2026, 13:04 UTC`. */
+export function momentUtc(iso: string): string {
+	return `${inUtc.format(new Date(iso))} UTC`;
+}
+
+/** A moment by the clock of the device that shows it: `1 Dec 2026, 14:04`. */
+export function momentHere(iso: string): string {
+	return new Intl.DateTimeFormat(LOCALE, dayAndTime).format(new Date(iso));
+}

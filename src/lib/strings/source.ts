@@ -27,6 +27,7 @@ export const source = {
 	verified: 'verified',
 	secondary: 'verified, quoted in another source',
 	unverified: 'unverified: recalled, not yet checked against the source',
+	unverifiedShort: 'unverified',
 	pooledTeeth: 'tooth types pooled',
 	totalUnknown: 'total not given',
 	derived: 'count worked out from the percentage',

@@ -22,6 +22,7 @@ export const table = {
 		source: 'Source, by its id',
 		sourceHint: 'Such as vertucci-1984; the list of sources has them all.',
 		limit: 'Rows on a page',
+		more: 'Tooth, root, method, country and other filters',
 		columns: 'Columns',
 		apply: 'Show',
 		clear: 'Clear the filters',
@@ -61,7 +62,7 @@ export const table = {
 	downloadAll: 'The whole table',
 	downloadFound: 'What the filters leave',
 	downloadNote:
-		'The same columns as the files the table is made from. In CSV a cell that a spreadsheet would run as a formula has an apostrophe in front.',
+		'The same columns as the files the table is made from. In CSV a cell that a spreadsheet would run as a formula has an apostrophe in front. Figures and bibliographic facts are as the sources published them: cite those sources.',
 	filtered: 'Entries of the table with these figures only',
 
 	entry: (id: number) => `Entry ${id}`,

@@ -3,22 +3,22 @@ import { serverDatabase } from '../db/server';
 import { checkEntryFilters } from '../table/entryFilters';
 import { CITATION_FILES, cite } from '../table/citations';
 import { citationsOf } from '../table/sources';
-import { publishedRevision, tableCsv, tableJson } from '../table/wholeTable';
+import { LICENCE_NOTE, publishedRevision, tableCsv, tableJson } from '../table/wholeTable';
 
 /** Sources cited between two looks at what else waits: a bibliography of thousands must hold nobody up. */
 const CHUNK_SOURCES = 50;
 
 /** Text that is made while it is sent: the next piece when the reader has room for it. */
-function streamed(pieces: AsyncGenerator<string>, headers: Record<string, string>): Response {
+function streamed(pieces: AsyncGenerator<string, void>, headers: Record<string, string>): Response {
 	const encoder = new TextEncoder();
 	const body = new ReadableStream<Uint8Array>({
 		async pull(controller) {
-			const { done, value } = await pieces.next();
-			if (done) controller.close();
-			else controller.enqueue(encoder.encode(value));
+			const piece = await pieces.next();
+			if (piece.done) controller.close();
+			else controller.enqueue(encoder.encode(piece.value));
 		},
 		async cancel() {
-			await pieces.return(undefined);
+			await pieces.return();
 		}
 	});
 	return new Response(body, { headers });
@@ -41,7 +41,7 @@ export async function downloadTable(filters: EntryFilters, ending: 'csv' | 'json
 		'content-disposition': `attachment; filename="${fileName(name, ending)}"`,
 		'last-modified': new Date(published.date).toUTCString(),
 		'x-table-revision': String(published.revision),
-		link: '</about>; rel="license"'
+		'x-table-licence': LICENCE_NOTE
 	};
 	return ending === 'csv'
 		? streamed(tableCsv(db, filters, published.revision), {
@@ -61,8 +61,12 @@ export async function downloadSources(
 ): Promise<Response> {
 	const sources = await citationsOf(await serverDatabase(), q);
 	const { type, ending } = CITATION_FILES[format];
-	async function* pieces() {
-		if (format === 'csl') return yield cite(sources, format);
+	async function* pieces(): AsyncGenerator<string, void> {
+		// One list, not several.
+		if (format === 'csl') {
+			yield cite(sources, format);
+			return;
+		}
 		for (let start = 0; start < sources.length; start += CHUNK_SOURCES) {
 			yield cite(sources.slice(start, start + CHUNK_SOURCES), format);
 			await new Promise(setImmediate);

@@ -3,6 +3,7 @@ import type { Sequelize } from 'sequelize';
 import { openDatabase } from './connection';
 import { migrate } from './migrate';
 import { defineIntake } from './models/intake';
+import { defineDesk } from './models/desk';
 import { defineLiterature } from './models/literature';
 import { defineMail } from './models/mail';
 import { definePeople } from './models/people';
@@ -28,6 +29,7 @@ export async function connect(dataDir: string): Promise<Sequelize> {
 	defineIntake(sequelize);
 	definePeople(sequelize);
 	defineMail(sequelize);
+	defineDesk(sequelize);
 	return sequelize;
 }
 

@@ -11,6 +11,7 @@ import type { ConfluenceAnswer, ConfluenceOutlook } from './confluence';
 import type { ConfluenceQuestion } from './confluenceQuestion';
 import { sumCoverage, type RootCoverage, type TableCoverage } from './coverage';
 import { OneByOne } from './oneByOne';
+import type { TableChange } from './preview';
 import { createTasks, type RootAnswer, type Tasks, type ToothAnswer } from './tasks';
 import type { Filters, Study } from './types';
 
@@ -138,6 +139,11 @@ class Estimator {
 
 	pool(studies: Study[], level?: number) {
 		return this.#run('pool', [studies, level]);
+	}
+
+	/** A root as it would be if the table were changed; not kept, since a draft is seldom asked about twice. */
+	changed(change: TableChange, place: { tooth: string; root: string; entry: number }) {
+		return this.#run('changed', [change, place]);
 	}
 
 	/** Lets running tasks finish, then ends the threads. */

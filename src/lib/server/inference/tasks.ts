@@ -8,6 +8,7 @@ import { expectRoot, type Expectation } from './expectation';
 import { gatherFeatures } from './features';
 import { observedSequences, type ObservedSequence } from './observed';
 import { pool } from './pool';
+import { changedRoot, type ChangedRoot, type TableChange } from './preview';
 import { buildRootModel } from './rootModel';
 import { indexTable } from './tableIndex';
 import type {
@@ -52,6 +53,8 @@ export interface Tasks {
 	outlook(model: RootModel, question: ConfluenceQuestion): ConfluenceOutlook;
 	confluence(model: RootModel, question: ConfluenceQuestion, prior?: ConfluenceOutlook): ConfluenceAnswer;
 	pool(studies: Study[], level: number | undefined): Omit<Pooled, 'grid'>;
+	/** A root as it would be if the table were changed. */
+	changed(change: TableChange, place: { tooth: string; root: string; entry: number }): ChangedRoot;
 }
 
 /** Makes the tasks over one revision of the table. The index over the rows is made once, by the first task that needs it. */
@@ -98,6 +101,7 @@ export function createTasks(table: {
 		pool(studies, level) {
 			const { grid: _, ...figures } = pool(studies, { level });
 			return figures;
-		}
+		},
+		changed: (change, place) => changedRoot(table, change, place)
 	};
 }

@@ -4,7 +4,7 @@ import { HASHING, hashPassword, isOutdated, passwordMistake, verifyPassword } fr
 
 const verify = vi.hoisted(() => vi.fn());
 vi.mock('@node-rs/argon2', async (original) => {
-	const real = await original<typeof import('@node-rs/argon2')>();
+	const real = await original<{ verify: (hashed: string, password: string) => Promise<boolean> }>();
 	verify.mockImplementation(real.verify);
 	return { ...real, verify };
 });

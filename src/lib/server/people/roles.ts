@@ -59,7 +59,7 @@ export function requireRole(role: Role | readonly Role[], needs: Needs = {}): Si
 
 /** Whether somebody has a role, or one of several. */
 export const hasRole = (user: Pick<SignedIn, 'roles'> | null, role: Role | readonly Role[]): boolean =>
-	!!user && [role].flat().some((one) => user.roles.includes(one as Role));
+	!!user && [role].flat().some((one) => user.roles.includes(one));
 
 /** The API's answer to a request without an account. */
 export const unauthorized = (detail = 'Sign in, or send a token as Authorization: Bearer.') =>

@@ -1,3 +1,4 @@
+import { site } from '$lib/strings/site';
 import { Setting } from '../db/models/people';
 import { inTransaction } from './accounts';
 import { recordAudit } from './audit';
@@ -20,6 +21,12 @@ export async function readSettings(): Promise<Settings> {
 		name: kept.get('name') ?? DEFAULTS.name,
 		tableOpen: (kept.get('table open') ?? String(DEFAULTS.tableOpen)) === 'true'
 	};
+}
+
+/** The name under which the installation speaks, as in mail: the product's, with its own where it has one. */
+export async function productName(): Promise<string> {
+	const { name } = await readSettings();
+	return name ? `${site.name} at ${name}` : site.name;
 }
 
 /** Changes the settings. */

@@ -34,7 +34,7 @@ const halpern: CslSource = {
 afterEach(() => vi.unstubAllGlobals());
 
 /** The tags of a RIS record, as the format's own description has it: two characters, two spaces, a hyphen, a space. */
-const tagsOf = (ris: string) =>
+const tagsOf = (ris: string): [string, string][] =>
 	ris
 		.split('\r\n')
 		.filter((line) => line !== '')

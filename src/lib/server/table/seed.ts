@@ -171,7 +171,7 @@ async function seedSamples(db: Sequelize, planned: PlannedSample[]) {
 		return before && before.seedHash !== entry.hash && !edited.has(before.id);
 	});
 	await inChunks(db, changed, async (chunk, transaction) => {
-		const rows = chunk.map(({ entry }) => ({ id: known.get(entry.key)!.id, entry }));
+		const rows = chunk.map(({ sample, entry }) => ({ id: known.get(entry.key)!.id, sample, entry }));
 		for (const { id, entry } of rows) {
 			await Entry.update({ seedHash: entry.hash, state: 'published' }, { where: { id }, transaction });
 			await Figure.destroy({ where: { entryId: id }, transaction });
@@ -184,8 +184,12 @@ async function seedSamples(db: Sequelize, planned: PlannedSample[]) {
 
 /** Entries that somebody other than the seed has revised: the seed leaves them alone. */
 async function editedEntries(): Promise<Set<number>> {
-	const revisions = await Revision.findAll({ attributes: ['entryId', 'who'] });
-	return new Set(revisions.filter(({ who }) => who !== SEED_PERSON).map(({ entryId }) => entryId));
+	const revisions = await Revision.findAll({
+		attributes: ['entryId'],
+		where: { [Op.or]: [{ who: { [Op.ne]: SEED_PERSON } }, { whoId: { [Op.ne]: null } }] },
+		group: ['entryId']
+	});
+	return new Set(revisions.map(({ entryId }) => entryId));
 }
 
 async function writeFigures(rows: { id: number; entry: PlannedEntry }[], transaction: Transaction) {
@@ -196,7 +200,7 @@ async function writeFigures(rows: { id: number; entry: PlannedEntry }[], transac
 }
 
 async function writeRevisions(
-	rows: { id: number; entry: PlannedEntry }[],
+	rows: { id: number; sample: PlannedSample; entry: PlannedEntry }[],
 	why: string,
 	transaction: Transaction
 ) {
@@ -209,15 +213,30 @@ async function writeRevisions(
 	}
 	const at = new Date().toISOString();
 	await Revision.bulkCreate(
-		rows.map(({ id, entry }) => {
+		rows.map(({ id, sample, entry }) => {
 			const { locator, measure, provenance, figures } = entry;
+			const { sourceId: source, tooth, root, scope, country, method, subgroup, total } = sample;
+			const content = {
+				source,
+				locator,
+				provenance,
+				tooth,
+				root,
+				scope,
+				country,
+				method,
+				subgroup,
+				total,
+				measure,
+				figures
+			};
 			return {
 				entryId: id,
 				number: (last.get(id)?.number ?? 0) + 1,
 				at,
 				who: SEED_PERSON,
 				before: last.get(id)?.after ?? null,
-				after: JSON.stringify({ state: 'published', locator, measure, provenance, figures }),
+				after: JSON.stringify({ state: 'published', ...content }),
 				why
 			};
 		}),
@@ -247,7 +266,10 @@ async function withdrawMissing(db: Sequelize, planned: PlannedSample[]): Promise
 					at: new Date().toISOString(),
 					who: SEED_PERSON,
 					before: last?.after ?? null,
-					after: JSON.stringify({ state: 'withdrawn' }),
+					after: JSON.stringify({
+						...(JSON.parse(last?.after ?? '{}') as Record<string, unknown>),
+						state: 'withdrawn'
+					}),
 					why: 'No longer part of the shipped literature.'
 				},
 				{ transaction }

@@ -38,6 +38,8 @@ export class Sample extends Model<InferAttributes<Sample>, InferCreationAttribut
 	declare subgroup: string;
 	declare total: number | null;
 	declare poolable: boolean | null;
+	/** Why an editor said so; null where none has. */
+	declare poolableReason: CreationOptional<string | null>;
 	declare seedKey: string | null;
 }
 
@@ -71,6 +73,10 @@ export class Revision extends Model<InferAttributes<Revision>, InferCreationAttr
 	declare number: number;
 	declare at: string;
 	declare who: string;
+	/** Null for the seed. */
+	declare whoId: CreationOptional<string | null>;
+	/** Who drafted what this revision publishes. */
+	declare author: CreationOptional<string | null>;
 	declare before: string | null;
 	declare after: string | null;
 	declare why: string;
@@ -83,7 +89,13 @@ export class TableRevision extends Model<
 	declare id: CreationOptional<number>;
 	declare at: string;
 	declare why: string;
-	declare seedDigest: string | null;
+	declare seedDigest: CreationOptional<string | null>;
+	/** Who published it; null for the seed. */
+	declare who: CreationOptional<string | null>;
+	/** Who wrote what was published, where it was checked by another. */
+	declare author: CreationOptional<string | null>;
+	/** Number of the last revision of an entry that belongs to it; filled in by the database. */
+	declare lastRevision: CreationOptional<number | null>;
 }
 
 export class UnplacedRow extends Model<InferAttributes<UnplacedRow>, InferCreationAttributes<UnplacedRow>> {
@@ -134,6 +146,7 @@ export function defineLiterature(sequelize: Sequelize) {
 			subgroup: text(),
 			total: INTEGER,
 			poolable: BOOLEAN,
+			poolableReason: TEXT,
 			seedKey: TEXT
 		},
 		{ sequelize, tableName: 'sample' }
@@ -173,6 +186,8 @@ export function defineLiterature(sequelize: Sequelize) {
 			number: integer(),
 			at: text(),
 			who: text(),
+			whoId: TEXT,
+			author: TEXT,
 			before: TEXT,
 			after: TEXT,
 			why: text()
@@ -180,7 +195,15 @@ export function defineLiterature(sequelize: Sequelize) {
 		{ sequelize, tableName: 'revision' }
 	);
 	TableRevision.init(
-		{ id: id(), at: text(), why: text(), seedDigest: TEXT },
+		{
+			id: id(),
+			at: text(),
+			why: text(),
+			seedDigest: TEXT,
+			who: TEXT,
+			author: TEXT,
+			lastRevision: INTEGER
+		},
 		{ sequelize, tableName: 'table_revision' }
 	);
 	UnplacedRow.init(
