@@ -149,7 +149,7 @@ test.describe('without JavaScript', () => {
 
 test('the whole table is served with its revision, date and licence note', async ({ request }) => {
 	const csv = await request.get('/api/v1/table.csv');
-	expect(csv.headers()).toMatchObject({ 'content-type': expect.stringContaining('text/csv') as string });
+	expect(csv.headers()).toMatchObject({ 'content-type': expect.stringContaining('text/csv') });
 	expect(Number(csv.headers()['x-table-revision'])).toBeGreaterThan(0);
 	expect(csv.headers()['x-table-licence']).toMatch(/cite those sources/);
 	const json = (await (await request.get('/api/v1/table.json')).json()) as {

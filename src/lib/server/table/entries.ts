@@ -50,11 +50,11 @@ export type EntriesPage = Omit<Page<never>, 'rows'> & { entries: EntryDto[] };
  * @throws Problem 422 for a cursor that is not of this list
  */
 export async function listEntries(db: Sequelize, query: EntriesQuery): Promise<EntriesPage> {
-	const { where, bind } = entryConditions(query);
+	const conditions = entryConditions(query);
 	// Counting, sorting and cutting read the narrow table alone; the rest is fetched for the rows of the page.
 	const { rows: ids, ...page } = await readPage<{ id: number }>(
 		db,
-		{ columns: 'entry_row.entry_id AS id', from: 'entry_row', where, bind },
+		{ columns: 'entry_row.entry_id AS id', from: 'entry_row', ...conditions },
 		{ sort: query.sort, key: SORT_SQL[query.sort.replace('-', '')], id: 'entry_row.entry_id' },
 		query
 	);

@@ -6,6 +6,8 @@ import { matchExpression } from './searchWords';
 export interface EntryConditions {
 	where: string[];
 	bind: Record<string, string | number>;
+	/** Where the words are all there is to go by: the index that counts them alone, without looking at any row. */
+	counted?: { from: string; bind: Record<string, string> };
 }
 
 /**
@@ -40,15 +42,19 @@ export function entryConditions(
 	}
 	if (filters.q) {
 		const words = matchExpression(filters.q);
-		where.push(
-			words === null
-				? '1 = 0'
-				: 'entry_row.entry_id IN (SELECT rowid FROM entry_search WHERE entry_search MATCH $words)'
-		);
-		if (words !== null) bind.words = words;
+		if (words === null) return { where: ['1 = 0'], bind: {} };
+		bind.words = `(${states.map(stateWord).join(' OR ')}) AND ${words}`;
+		const alone = where.length === 1;
+		where.push(`entry_row.entry_id IN (SELECT rowid FROM ${MATCHING})`);
+		if (alone) return { where, bind, counted: { from: MATCHING, bind: { words: bind.words } } };
 	}
 	return { where, bind };
 }
+
+const MATCHING = 'entry_search WHERE entry_search MATCH $words';
+
+/** A state as the words of the index have it (migrations/…tableIndex). */
+const stateWord = (state: EntryState) => `"ǀ${state.replace('-', '')}"`;
 
 /** Whether a sample's country is the one bound as `$country`, or has it among several: `DEU` is in `CHE+DEU`. */
 export const inCountry = (column: string) => `instr('+' || ${column} || '+', '+' || $country || '+') > 0`;

@@ -47,9 +47,10 @@ const entryRow = (where: string) =>
 		SELECT entry.id, entry.state, entry.source_id, source_row.author, coalesce(source_row.year, 0), sample.tooth, sample.root,
 			entry.measure, sample.method, sample.country, coalesce(sample.total, 0)
 		FROM entry JOIN sample ON sample.id = entry.sample_id JOIN source_row ON source_row.source_id = entry.source_id ${where}`;
+/** The state stands among the words, as one that nobody types, so that the index alone can count what visitors may see. */
 const entryWords = (where: string) =>
 	`INSERT INTO entry_search (rowid, words)
-		SELECT entry.id, concat_ws('${APART}', source_row.authors, source.title, source.journal, source.id, source.year, sample.tooth, sample.root,
+		SELECT entry.id, concat_ws('${APART}', 'ǀ' || replace(entry.state, '-', ''), source_row.authors, source.title, source.journal, source.id, source.year, sample.tooth, sample.root,
 			sample.scope, sample.country, sample.method, sample.subgroup, entry.measure, entry.locator,
 			(SELECT group_concat(figure.category || '${APART}' || figure.note, '${APART}') FROM figure WHERE figure.entry_id = entry.id))
 		FROM entry JOIN sample ON sample.id = entry.sample_id JOIN source ON source.id = entry.source_id
