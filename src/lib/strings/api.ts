@@ -1,7 +1,7 @@
 /** Words of the page that describes the API. */
 export const api = {
 	title: 'The HTTP API',
-	lead: 'Everything the screens show can be asked for as JSON. Reading the table and calculating need no account. Each example runs on this server.',
+	lead: 'Everything the screens show can be asked for as JSON. Reading the table and calculating need no account unless an administrator has closed the table; a script then sends a token made under “My account”. Each example runs on this server.',
 	document: 'OpenAPI 3.1 document',
 	errors:
 		'Every answer that is not a success is a problem document (RFC 9457): type, title, status, detail, and errors that name the field.',

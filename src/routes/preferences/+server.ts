@@ -1,6 +1,7 @@
 import { error, redirect, type RequestHandler } from '@sveltejs/kit';
 import { preferencesSchema } from '$lib/schemas/preferences';
 import { PREFERENCES_COOKIE } from '$lib/server/hooks/preferences';
+import { ownAddress } from '$lib/server/ownAddress';
 
 const KEPT_SECONDS = 365 * 24 * 60 * 60;
 
@@ -20,12 +21,3 @@ export const POST: RequestHandler = async ({ request, cookies, url }) => {
 	}
 	redirect(303, ownAddress(form.get('back'), url.origin));
 };
-
-/** The address to go back to, or the start page for anything that leads off this site. */
-function ownAddress(back: FormDataEntryValue | null, origin: string): string {
-	if (typeof back !== 'string' || !URL.canParse(back, origin)) return '/';
-	const target = new URL(back, origin);
-	// A path with two slashes at its start would be read as the address of another site.
-	const own = target.origin === origin && !target.pathname.startsWith('//');
-	return own ? target.pathname + target.search : '/';
-}

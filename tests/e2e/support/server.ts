@@ -45,6 +45,22 @@ export class OwnServer {
 		return new OwnServer(`http://localhost:${port}`, child, dataDir);
 	}
 
+	/** Waits until the server has printed something, and gives the match of it that came last. */
+	async printed(pattern: RegExp): Promise<RegExpMatchArray> {
+		const deadline = Date.now() + START_TIMEOUT_MS;
+		while (Date.now() < deadline) {
+			const found = [...this.output.matchAll(new RegExp(pattern, 'g'))].at(-1);
+			if (found) return found;
+			await wait(50);
+		}
+		throw new Error(`The server did not print ${pattern}. ${this.output}`);
+	}
+
+	/** Everything it has printed so far. */
+	get printedSoFar(): string {
+		return this.output;
+	}
+
 	signal(name: NodeJS.Signals) {
 		this.child.kill(name);
 	}

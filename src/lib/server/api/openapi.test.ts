@@ -5,7 +5,7 @@ import { Ajv2020 } from 'ajv/dist/2020.js';
 import { fullFormats } from 'ajv-formats/dist/formats.js';
 import { describe, expect, it } from 'vitest';
 import { describeOperations, openApiDocument } from './openapi';
-import { operations } from './operations';
+import { failuresOf, operations } from './operations';
 
 const ORIGIN = 'https://canals.example.org';
 const routes = import.meta.glob<Record<string, unknown>>('/src/routes/api/v1/**/+server.ts');
@@ -33,11 +33,13 @@ interface Described {
 	operationId: string;
 	parameters: { name: string; in: string; required: boolean }[];
 	requestBody?: { content: { 'application/json': { schema: Schema; example: unknown } } };
+	security: Record<string, string[]>[];
 	responses: Record<string, { description?: string; content: Record<string, { schema: Schema }> }>;
 }
 interface Document {
 	servers: { url: string }[];
 	paths: Record<string, Record<string, Described>>;
+	components: { securitySchemes: Record<string, unknown> };
 }
 
 /** The document as a caller gets it. */
@@ -87,9 +89,7 @@ describe('the OpenAPI document', () => {
 		'describes the answer, failures and parameters of %s',
 		(id, { operation, entry }) => {
 			expect(entry.operationId).toBe(id);
-			expect(Object.keys(entry.responses).map(Number)).toEqual(
-				[200, ...operation.failures, 429, 503].sort((a, b) => a - b)
-			);
+			expect(Object.keys(entry.responses).map(Number)).toEqual([200, ...failuresOf(operation)]);
 			for (const [status, { description, content }] of Object.entries(entry.responses)) {
 				expect(description).toBeTruthy();
 				if (status === '200') {
@@ -105,6 +105,17 @@ describe('the OpenAPI document', () => {
 			expect(entry.parameters.every((one) => one.in !== 'path' || one.required)).toBe(true);
 			expect(entry.parameters.some((one) => one.in === 'query')).toBe(operation.query !== undefined);
 			expect(entry.requestBody !== undefined).toBe(operation.body !== undefined);
+		}
+	);
+
+	it.each(described.map((one) => [one.operation.id, one] as const))(
+		'says who may ask for %s',
+		(_, { operation: { access }, entry }) => {
+			const open = entry.security.some((scheme) => Object.keys(scheme).length === 0);
+			expect(open).toBe(access === undefined || access === 'everybody');
+			const schemes = entry.security.flatMap((scheme) => Object.keys(scheme));
+			for (const scheme of schemes) expect(document.components.securitySchemes).toHaveProperty(scheme);
+			if (access && access !== 'everybody') expect(entry.security).toContainEqual({ token: [access.scope] });
 		}
 	);
 

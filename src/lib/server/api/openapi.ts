@@ -1,11 +1,14 @@
 import { z } from 'zod';
 import { problemSchema } from '$lib/schemas/common';
-import { operations, type Operation } from './operations';
+import { SESSION_COOKIE } from '../people/sessions';
+import { failuresOf, operations, type Operation } from './operations';
 
 type Json = Record<string, unknown>;
 
 const REASONS: Record<number, string> = {
 	400: 'Not valid JSON',
+	401: 'No account, or a token that is not known or has ended',
+	403: 'The roles of the person, or the scopes of the token, do not allow this',
 	404: 'Unknown tooth, root or id',
 	413: 'The body is too large',
 	415: 'The body is not application/json',
@@ -41,14 +44,29 @@ export function openApiDocument(origin: string): Json {
 		},
 		servers: [{ url: `${origin}/api/v1` }],
 		paths,
-		components: { schemas: { Problem: jsonSchema(problemSchema, 'output') } }
+		components: {
+			schemas: { Problem: jsonSchema(problemSchema, 'output') },
+			securitySchemes: {
+				session: {
+					type: 'apiKey',
+					in: 'cookie',
+					name: SESSION_COOKIE,
+					description: 'The session of a browser that is signed in; only from pages of this site'
+				},
+				token: {
+					type: 'http',
+					scheme: 'bearer',
+					description: 'A token that a person makes under "My account"; it has scopes and an end'
+				}
+			}
+		}
 	};
 }
 
 /** The operations as the page about the API shows them, each with an example that works on the shipped table. */
 export function describeOperations() {
 	return operations.map((operation) => {
-		const { id, method, path, summary, body, response, formats, failures } = operation;
+		const { id, method, path, summary, body, response, formats } = operation;
 		const schema = (of: z.ZodType, io: 'input' | 'output') => JSON.stringify(jsonSchema(of, io), null, 2);
 		return {
 			id,
@@ -61,7 +79,8 @@ export function describeOperations() {
 				required: parameter.required === true,
 				...(typeof parameter.description === 'string' && { description: parameter.description })
 			})),
-			failures: [...failures, 429, 503].map((status) => ({
+			access: accessInWords(operation),
+			failures: failuresOf(operation).map((status) => ({
 				status: String(status),
 				description: REASONS[status]
 			})),
@@ -89,7 +108,7 @@ function exampleOf({ exampleParameters = {} }: Operation, name: string): string 
 
 function describe(operation: Operation): Json {
 	const failures = Object.fromEntries(
-		[...operation.failures, 429, 503].map((status) => [
+		failuresOf(operation).map((status) => [
 			String(status),
 			{
 				description: REASONS[status],
@@ -103,6 +122,8 @@ function describe(operation: Operation): Json {
 	return {
 		operationId: operation.id,
 		summary: operation.summary,
+		description: accessInWords(operation),
+		security: securityOf(operation),
 		parameters: [...pathParameters(operation), ...queryParameters(operation.query)],
 		...(operation.body && {
 			requestBody: {
@@ -123,6 +144,22 @@ function describe(operation: Operation): Json {
 			...failures
 		}
 	};
+}
+
+/** Who may ask, in words: OpenAPI 3.1 lets a bearer scheme list what it needs, but not roles. */
+function accessInWords({ access }: Operation): string {
+	if (access === 'everybody') return 'Open to everybody.';
+	if (!access)
+		return 'Open to everybody, unless an administrator has closed the table: then an account is needed, or a token with the scope table:read.';
+	const role = access.role ? ` whose role is ${access.role}` : '';
+	return `Needs an account${role}; a token also needs the scope ${access.scope}.`;
+}
+
+/** The schemes of an operation; the empty one says that none is needed. */
+function securityOf({ access }: Operation): Json[] {
+	if (access === 'everybody') return [{}];
+	if (!access) return [{}, { session: [] }, { token: ['table:read'] }];
+	return [{ session: [] }, { token: [access.scope] }];
 }
 
 function pathParameters(operation: Operation): Json[] {

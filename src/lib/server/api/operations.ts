@@ -1,9 +1,17 @@
 import type { z } from 'zod';
+import type { Role, Scope } from '$lib/schemas/terms';
 import { filtersQuerySchema } from '$lib/schemas/common';
 import { confluenceRequestSchema, confluenceResponseSchema } from '$lib/schemas/confluence';
 import { tableCoverageSchema } from '$lib/schemas/coverage';
 import { expectationSchema } from '$lib/schemas/expectation';
 import { levelRequestSchema, levelResponseSchema } from '$lib/schemas/level';
+import {
+	auditQuerySchema,
+	auditSchema,
+	meSchema,
+	peopleQuerySchema,
+	peopleSchema
+} from '$lib/schemas/people';
 import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
 import {
 	bibliographyQuerySchema,
@@ -36,8 +44,13 @@ export interface Operation {
 	response?: z.ZodType;
 	/** Media types of text that the answer may come in. */
 	formats?: string[];
-	/** Statuses other than 200 that the operation may answer with, besides 429. */
+	/** Statuses other than 200 that the operation may answer with, besides 429 and those of its access. */
 	failures: number[];
+	/**
+	 * Who may ask. Default: everybody, unless an administrator has closed the table; then an account, or a token with table:read.
+	 * 'everybody' always; otherwise an account, or a token with the scope, whose person has the role.
+	 */
+	access?: 'everybody' | { scope: Scope; role?: Role };
 }
 
 const slug = { tooth: 'maxillary-first-molar', root: 'MB' };
@@ -224,6 +237,43 @@ export const operations: Operation[] = [
 		id: 'health',
 		summary: 'Whether the server is ready, and the revision of its table',
 		response: healthSchema,
-		failures: []
+		failures: [],
+		access: 'everybody'
+	},
+	{
+		method: 'get',
+		path: '/me',
+		id: 'getMe',
+		summary: 'The account that asks, its roles, and the scopes of its token',
+		response: meSchema,
+		failures: [422],
+		access: { scope: 'account:read' }
+	},
+	{
+		method: 'get',
+		path: '/people',
+		id: 'listPeople',
+		summary: 'People with an account, filtered, sorted, in pages',
+		query: peopleQuerySchema,
+		response: peopleSchema,
+		failures: [422],
+		access: { scope: 'people:read', role: 'administrator' }
+	},
+	{
+		method: 'get',
+		path: '/audit',
+		id: 'listAudit',
+		summary: 'The audit log, the newest first, filtered, in pages',
+		query: auditQuerySchema,
+		response: auditSchema,
+		failures: [422],
+		access: { scope: 'audit:read', role: 'administrator' }
 	}
 ];
+
+/** Statuses other than 200 that an operation may answer with. */
+export function failuresOf({ failures, access }: Operation): number[] {
+	// A token that does not hold is refused everywhere, also where none is needed.
+	const refusals = access === 'everybody' ? [401] : [401, 403];
+	return [...new Set([...failures, ...refusals, 429, 503])].sort((a, b) => a - b);
+}

@@ -19,7 +19,7 @@ export const signInAgain: Handle = async ({ event, resolve }) => {
 		return Response.json(failure, { headers: { 'cache-control': 'no-store' } });
 	}
 	const to = new URLSearchParams({ to: url.pathname + url.search });
-	return new Response(null, { status: 307, headers: { location: `/sign-in/again?${to}` } });
+	return new Response(null, { status: 307, headers: { location: `/sign-in/again?/carry&${to}` } });
 };
 
 /**

@@ -13,12 +13,14 @@ const AGENT_LENGTH = 300;
 
 const secure = environment.ORIGIN.startsWith('https:');
 
+/** Name of the session's cookie. The prefix binds it to this very host over https; browsers refuse it over plain http. */
+export const SESSION_COOKIE = secure ? '__Host-session' : 'session';
+
 // lucia is no longer developed: nothing outside this file knows of it.
 const lucia = new Lucia(sessionStore, {
 	sessionExpiresIn: new TimeSpan(SESSION_DAYS, 'd'),
 	sessionCookie: {
-		// The prefix binds the cookie to this very host over https; browsers refuse it over plain http.
-		name: secure ? '__Host-session' : 'session',
+		name: SESSION_COOKIE,
 		attributes: { secure, sameSite: 'lax', path: '/' }
 	},
 	getUserAttributes: (owner) => owner,
@@ -50,7 +52,7 @@ export interface Device extends Omit<SessionFacts, 'handle'> {
  * and drops a cookie that opens nothing.
  */
 export async function readSession({ cookies, getClientAddress }: RequestEvent): Promise<SessionOwner | null> {
-	const id = cookies.get(lucia.sessionCookieName);
+	const id = cookies.get(SESSION_COOKIE);
 	if (!id) return null;
 	const { session, user } = await lucia.validateSession(id);
 	if (!session) {
@@ -64,9 +66,12 @@ export async function readSession({ cookies, getClientAddress }: RequestEvent): 
 	return { id: user.id, email, name, roles, secondFactor, handle: session.handle };
 }
 
-/** Signs a person in with a new session: the one the browser had before ends, so nobody can have planted it. */
-export async function startSession(event: RequestEvent, personId: string): Promise<void> {
-	const before = event.cookies.get(lucia.sessionCookieName);
+/**
+ * Signs a person in with a new session: the one the browser had before ends, so nobody can have planted it.
+ * @returns the session's handle
+ */
+export async function startSession(event: RequestEvent, personId: string): Promise<string> {
+	const before = event.cookies.get(SESSION_COOKIE);
 	if (before) await lucia.invalidateSession(before);
 	const at = now();
 	const facts: SessionFacts = {
@@ -78,11 +83,12 @@ export async function startSession(event: RequestEvent, personId: string): Promi
 	};
 	const { id } = await lucia.createSession(personId, facts, { sessionId: newSecret() });
 	keepCookie(event.cookies, id);
+	return facts.handle;
 }
 
 /** Signs this browser out. */
 export async function endSession({ cookies }: RequestEvent): Promise<void> {
-	const id = cookies.get(lucia.sessionCookieName);
+	const id = cookies.get(SESSION_COOKIE);
 	if (id) await lucia.invalidateSession(id);
 	dropCookie(cookies);
 }

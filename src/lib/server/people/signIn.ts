@@ -1,7 +1,7 @@
 import type { Cookies, RequestEvent } from '@sveltejs/kit';
 import { environment } from '../config';
 import { Person } from '../db/models/people';
-import { emailKey, findByEmail } from './accounts';
+import { emailKey, findByEmail, rolesOf } from './accounts';
 import { recordAudit } from './audit';
 import { codeLimit, signInLimits } from './limits';
 import { hashPassword, isOutdated, verifyPassword } from './passwords';
@@ -43,12 +43,20 @@ export async function signIn(event: RequestEvent, email: string, password: strin
 	}
 	await rightful();
 	if (isOutdated(active.passwordHash)) await active.update({ passwordHash: await hashPassword(password) });
-	if (active.totpSecret !== null) {
-		waitForCode(event.cookies, active);
-		return { outcome: 'code needed' };
+	return { outcome: await goOn(event, active) };
+}
+
+/** Goes on after a reset as after a right password: a mailbox does not replace the second factor. */
+export const afterReset = (event: RequestEvent, person: Person): Promise<'signed in' | 'code needed'> =>
+	goOn(event, person);
+
+async function goOn(event: RequestEvent, person: Person) {
+	if (person.totpSecret !== null) {
+		waitForCode(event.cookies, person);
+		return 'code needed';
 	}
-	await enter(event, active);
-	return { outcome: 'signed in' };
+	await enter(event, person);
+	return 'signed in';
 }
 
 /**
@@ -78,7 +86,19 @@ export const stopWaiting = ({ cookies }: RequestEvent): void => cookies.delete(W
 
 /** Signs a person in whose right has been shown in whatever way, and remembers the browser. */
 export async function enter(event: RequestEvent, person: Person): Promise<void> {
-	await startSession(event, person.id);
+	const handle = await startSession(event, person.id);
+	const { id, email, name } = person;
+	const roles = await rolesOf(id);
+	// The page that answers this request shows them as signed in already.
+	event.locals.user = {
+		id,
+		email,
+		name,
+		roles,
+		secondFactor: person.totpSecret !== null,
+		handle,
+		scopes: null
+	};
 	stopWaiting(event);
 	if (deviceOf(event.cookies, person.id) === null)
 		event.cookies.set(DEVICE_COOKIE, sign(JSON.stringify([person.id, newId()])), {
