@@ -37,6 +37,8 @@ export const intake = {
 	yesOrNo: 'Write yes or no, or leave it empty.',
 	inTableOtherwise: (entry: number) =>
 		`The table has this entry already, with other figures (entry ${entry}). Change it there, or remove these rows.`,
+	draftOf: (entry: number) =>
+		`The desk has a draft of this entry already (entry ${entry}). Finish or discard it there, or remove these rows.`,
 	why: (file: string) => `Imported from ${file}.`,
 	failed: 'Something went wrong while writing. Nothing was kept.',
 	interrupted: 'The server stopped while this was being written. Nothing was kept.',

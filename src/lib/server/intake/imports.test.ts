@@ -4,11 +4,14 @@ import { afterAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import { temporaryDatabase, temporaryFolder } from '../../../../tests/support/database';
 import { cslSource, literature, observation } from '../../../../tests/support/madeUpLiterature';
 import { environment } from '../config';
+import { EntryWork } from '../db/models/desk';
 import { TableImport } from '../db/models/intake';
 import { Entry, Figure, Revision, Sample, TableRevision } from '../db/models/literature';
 import { Audit } from '../db/models/people';
 import { readLiteratureFiles } from '../table/literatureFiles';
 import { seedLiterature } from '../table/seed';
+import type { Estimate } from '../table/estimates';
+import { tableRevision } from '../table/snapshot';
 import { tableCsv } from '../table/wholeTable';
 import {
 	cancelImport,
@@ -23,6 +26,8 @@ import { COLUMNS } from './mapping';
 import { kindOf } from './reader';
 import { writeEntries } from './writeImport';
 
+/** Estimates are the estimator's own tests' matter. */
+const still: Estimate = async () => ({ revision: await tableRevision(), roots: [] });
 const person = { id: 'ida', name: 'Ida Editor' };
 let db: Sequelize;
 
@@ -72,7 +77,7 @@ describe('an import', () => {
 			preview: { rows: 301, fresh: 300, already: { total: 1 }, problems: { total: 0 } }
 		});
 		const revisions = await TableRevision.count();
-		expect(await startImport(db, row, person, true)).toBeNull();
+		expect(await startImport(db, row, person, true, still)).toBeNull();
 		expect(await ended(row)).toBe('done');
 		expect(await Entry.count({ where: { state: 'published' } })).toBe(301);
 		expect(await TableRevision.count()).toBe(revisions + 1);
@@ -84,15 +89,22 @@ describe('an import', () => {
 		expect(await Audit.count({ where: { action: 'table imported', actorId: 'ida' } })).toBe(1);
 		// The same file again brings nothing.
 		const again = await upload(csvOf(newRows(300)));
-		expect(await startImport(db, again, person, true)).toBe('nothing new');
+		expect(await startImport(db, again, person, true, still)).toBe('nothing new');
 	});
 
 	it('as drafts leaves the published table as it is', async () => {
 		const row = await upload(csvOf(newRows(5)));
 		const revisions = await TableRevision.count();
-		await startImport(db, row, person, false);
+		await startImport(db, row, person, false, still);
 		expect(await ended(row)).toBe('done');
 		expect(await Entry.count({ where: { state: 'draft' } })).toBe(5);
+		expect(await EntryWork.count({ where: { authorId: 'ida', state: 'draft' } })).toBe(5);
+		// Each has a sample of its own, which its edits may change.
+		expect(await Sample.count()).toBe(6);
+		const again = await readImport(db, await upload(csvOf(newRows(1))));
+		expect(again).toMatchObject({
+			preview: { problems: { total: 1, first: [{ message: expect.stringMatching(/draft/) as string }] } }
+		});
 		expect(await TableRevision.count()).toBe(revisions);
 	});
 
@@ -103,14 +115,14 @@ describe('an import', () => {
 		expect(answer.preview.problems.first).toMatchObject([{ row: 4, column: 'source_id' }]);
 		const { id } = (await Entry.findOne())!;
 		expect(answer.preview.problems.first[0].message).toContain(`entry ${id}`);
-		expect(await startImport(db, row, person, true)).toBe('problems');
+		expect(await startImport(db, row, person, true, still)).toBe('problems');
 		expect(await counts()).toEqual([1, 1, 1, 1]);
 	});
 
 	it('that is cancelled leaves nothing behind', async () => {
 		const row = await upload(csvOf(newRows(2_000)));
-		expect(await startImport(db, row, person, true)).toBeNull();
-		expect(await startImport(db, row, person, true)).toBe('busy');
+		expect(await startImport(db, row, person, true, still)).toBeNull();
+		expect(await startImport(db, row, person, true, still)).toBe('busy');
 		await vi.waitFor(() => expect(progressOf(row.id).written).toBeGreaterThan(0), { timeout: 20_000 });
 		expect(await Entry.count()).toBeGreaterThan(1);
 		expect(await cancelImport(row)).toBe(true);
@@ -124,7 +136,7 @@ describe('an import', () => {
 			`CREATE TRIGGER refuse BEFORE INSERT ON figure WHEN new.note = 'row 900' BEGIN SELECT RAISE(ABORT, 'disk full'); END`
 		);
 		const row = await upload(csvOf(newRows(1_000)));
-		await startImport(db, row, person, true);
+		await startImport(db, row, person, true, still);
 		expect(await ended(row)).toBe('failed');
 		expect(row.message).toMatch(/Nothing was kept/);
 		expect(await counts()).toEqual([1, 1, 1, 1]);
@@ -138,13 +150,13 @@ describe('an import', () => {
 		const write = () => writeEntries(db, job, answer.entries, new AbortController().signal, () => {});
 		await write();
 		await row.update({ state: 'writing' });
-		await recoverImports(db);
+		await recoverImports(db, still);
 		expect(await ended(row)).toBe('failed');
 		expect(await counts()).toEqual([1, 1, 1, 1]);
 
 		await write();
 		await row.update({ state: 'finishing', publish: true });
-		await recoverImports(db);
+		await recoverImports(db, still);
 		expect(await ended(row)).toBe('done');
 		expect(await Entry.count({ where: { state: 'published' } })).toBe(201);
 	});
@@ -170,7 +182,7 @@ describe('a table that is exported and imported', () => {
 		db = await temporaryDatabase();
 		await seedLiterature(db, { ...files, observations: [] });
 		const row = await upload(Buffer.from(exported));
-		expect(await startImport(db, row, person, true)).toBeNull();
+		expect(await startImport(db, row, person, true, still)).toBeNull();
 		expect(await ended(row)).toBe('done');
 		expect(await text()).toBe(exported);
 	});

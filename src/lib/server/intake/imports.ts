@@ -1,13 +1,14 @@
 /** Imports of tables, from the upload to the last row. */
-import { Op, QueryTypes, type Sequelize } from 'sequelize';
+import { Op, QueryTypes, type Sequelize, type Transaction } from 'sequelize';
 import { intake as words } from '$lib/strings/intake';
 import { TableImport, type ImportState } from '../db/models/intake';
-import { TableRevision } from '../db/models/literature';
 import { log } from '../log';
 import { recordAudit } from '../people/audit';
 import { newId, now } from '../people/secrets';
 import { storage } from '../storage';
 import { harmlessName } from '../storage/uploads';
+import { estimateRoots, placesOf, type Estimate, type Place } from '../table/estimates';
+import { changeTable } from '../table/publishing';
 import type { CheckedRows, PlannedEntry, Problem } from './checkRows';
 import { compareWithTable } from './inTable';
 import { MOST_PROBLEMS } from './limits';
@@ -159,7 +160,8 @@ export async function startImport(
 	db: Sequelize,
 	row: TableImport,
 	person: Person,
-	publish: boolean
+	publish: boolean,
+	estimate: Estimate = estimateRoots
 ): Promise<StartFailure | null> {
 	if (held.watersmeetImport) return 'busy';
 	if (row.state !== 'preview') return 'not ready';
@@ -188,14 +190,10 @@ export async function startImport(
 		const rows = answer.entries.reduce((sum, entry) => sum + entry.rows.length, 0);
 		await row.update({ state: 'writing', publish, rows, entries: answer.entries.length });
 		const job: ImportJob = { id: row.id, publish, person, why: words.why(row.file) };
-		void carryOut(
-			db,
-			row,
-			job,
-			answer.entries,
-			stop.signal,
-			(written) => (running.written = written)
-		).finally(end);
+		const report = (written: number) => (running.written = written);
+		void carryOut(db, row, job, { entries: answer.entries, signal: stop.signal, report, estimate }).finally(
+			end
+		);
 		return null;
 	} catch (error) {
 		end();
@@ -203,18 +201,29 @@ export async function startImport(
 	}
 }
 
+interface Work {
+	entries: readonly PlannedEntry[];
+	signal: AbortSignal;
+	report: (written: number) => void;
+	estimate: Estimate;
+}
+
 async function carryOut(
 	db: Sequelize,
 	row: TableImport,
 	job: ImportJob,
-	entries: readonly PlannedEntry[],
-	signal: AbortSignal,
-	report: (written: number) => void
+	{ entries, signal, report, estimate }: Work
 ): Promise<void> {
 	try {
+		const places = job.publish ? placesOf(entries.map(({ content }) => content)) : [];
+		// Beside the writing, so that the estimator has the table as it was before; the record takes the figures from there.
+		const before = estimate(places).catch((error: unknown) =>
+			log.warn({ err: error }, 'no estimates before an import')
+		);
 		await writeEntries(db, job, entries, signal, report);
+		await before;
 		await row.update({ state: 'finishing' });
-		await complete(db, row, job);
+		await complete(db, row, job, places, estimate);
 	} catch (error) {
 		await row.reload().catch(() => row);
 		// From finishing on, the next start carries it on.
@@ -238,16 +247,23 @@ async function giveUp(db: Sequelize, row: TableImport, state: ImportState, messa
 }
 
 /** The last steps: revisions and states, and one revision of the table. */
-async function complete(db: Sequelize, row: TableImport, job: ImportJob) {
+async function complete(
+	db: Sequelize,
+	row: TableImport,
+	job: ImportJob,
+	places: readonly Place[],
+	estimate: Estimate
+) {
 	await finishImport(db, job);
-	await db.transaction(async (transaction) => {
-		if (job.publish)
-			await TableRevision.create({ at: now(), why: job.why, seedDigest: null }, { transaction });
+	const close = async (transaction: Transaction) => {
 		await row.update({ state: 'done', endedAt: now() }, { transaction });
 		const detail = words.audit(row.entries, job.publish);
 		const actor = { id: row.personId, name: row.personName };
 		await recordAudit({ action: 'table imported', subject: row.file, detail, actor }, transaction);
-	});
+		return { why: job.why, who: row.personName };
+	};
+	if (job.publish) await changeTable(db, places, close, estimate);
+	else await db.transaction(close);
 	await storage().remove(row.stored);
 }
 
@@ -268,11 +284,17 @@ export async function discardImport(row: TableImport): Promise<void> {
 }
 
 /** At the start of the server: undoes what was being written, carries on what was being finished, removes uploads nobody imported. */
-export async function recoverImports(db: Sequelize): Promise<void> {
+export async function recoverImports(db: Sequelize, estimate: Estimate = estimateRoots): Promise<void> {
 	for (const row of await TableImport.findAll({ where: { state: ['writing', 'finishing'] } })) {
 		const person = { id: row.personId, name: row.personName };
 		if (row.state === 'finishing')
-			await complete(db, row, { id: row.id, publish: row.publish, person, why: words.why(row.file) });
+			await complete(
+				db,
+				row,
+				{ id: row.id, publish: row.publish, person, why: words.why(row.file) },
+				[],
+				estimate
+			);
 		else await giveUp(db, row, 'failed', words.interrupted);
 	}
 	const before = new Date(Date.now() - KEPT_DAYS * DAY_MS).toISOString();

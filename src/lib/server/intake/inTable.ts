@@ -10,6 +10,8 @@ const CHUNK_SOURCES = 40;
 export interface Clash {
 	planned: PlannedEntry;
 	entry: number;
+	/** It is on the desk and not in the table yet. */
+	draft: boolean;
 }
 
 export interface Comparison {
@@ -19,7 +21,7 @@ export interface Comparison {
 	clashes: Clash[];
 }
 
-type EntryRow = Omit<EntryContent, 'figures'> & { id: number; figures: string };
+type EntryRow = Omit<EntryContent, 'figures'> & { id: number; state: string; figures: string };
 
 const figuresText = (figures: EntryContent['figures']): string =>
 	JSON.stringify(
@@ -31,10 +33,10 @@ const figuresText = (figures: EntryContent['figures']): string =>
 /** Sorts planned entries into new ones, ones the table has, and ones it has otherwise. Withdrawn entries do not count. */
 export async function compareWithTable(db: Sequelize, planned: readonly PlannedEntry[]): Promise<Comparison> {
 	const sources = [...new Set(planned.map(({ content }) => content.source))];
-	const known = new Map<string, { id: number; figures: string }>();
+	const known = new Map<string, { id: number; draft: boolean; figures: string }>();
 	for (let start = 0; start < sources.length; start += CHUNK_SOURCES) {
 		const rows = await db.query<EntryRow>(
-			`SELECT entry.id, entry.source_id AS source, entry.locator, entry.measure, entry.provenance, sample.tooth, sample.root, sample.scope,
+			`SELECT entry.id, entry.state, entry.source_id AS source, entry.locator, entry.measure, entry.provenance, sample.tooth, sample.root, sample.scope,
 				sample.country, sample.method, sample.subgroup, sample.total,
 				(SELECT json_group_array(json_array(category, count, percent, count_derived, note)) FROM
 					(SELECT * FROM figure WHERE figure.entry_id = entry.id ORDER BY position)) AS figures
@@ -45,14 +47,15 @@ export async function compareWithTable(db: Sequelize, planned: readonly PlannedE
 				bind: { sources: JSON.stringify(sources.slice(start, start + CHUNK_SOURCES)) }
 			}
 		);
-		for (const { id, figures, ...content } of rows) known.set(entryKey(content), { id, figures });
+		for (const { id, state, figures, ...content } of rows)
+			known.set(entryKey(content), { id, draft: state !== 'published', figures });
 	}
 	const result: Comparison = { fresh: [], already: [], clashes: [] };
 	for (const entry of planned) {
 		const before = known.get(entry.key);
 		if (!before) result.fresh.push(entry);
-		else if (sameFigures(before.figures, entry.content.figures)) result.already.push(entry);
-		else result.clashes.push({ planned: entry, entry: before.id });
+		else if (!before.draft && sameFigures(before.figures, entry.content.figures)) result.already.push(entry);
+		else result.clashes.push({ planned: entry, entry: before.id, draft: before.draft });
 	}
 	return result;
 }

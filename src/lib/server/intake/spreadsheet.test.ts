@@ -1,11 +1,10 @@
 import { deflateRawSync } from 'node:zlib';
-import writeXlsxFile from 'write-excel-file/node';
+import writeXlsxFile, { type SheetData } from 'write-excel-file/node';
 import { describe, expect, it } from 'vitest';
 import { zipOf } from '../../../../tests/support/zip';
 import { checkArchive, DATE_MARK, readXlsx } from './spreadsheet';
 
-const sheetOf = (rows: unknown[][]) =>
-	writeXlsxFile(rows as Parameters<typeof writeXlsxFile>[0]).toBuffer() as Promise<Buffer>;
+const sheetOf = (rows: unknown[][]) => writeXlsxFile(rows as SheetData).toBuffer() as Promise<Buffer>;
 
 describe('a spreadsheet', () => {
 	it('is read as text, numbers as they are written, dates marked', async () => {

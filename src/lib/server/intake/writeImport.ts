@@ -8,7 +8,8 @@
 import { setTimeout as wait } from 'node:timers/promises';
 import { QueryTypes, type Sequelize, type Transaction } from 'sequelize';
 import type { EntryContent } from '$lib/entry/content';
-import { Revision } from '../db/models/literature';
+import { EntryWork } from '../db/models/desk';
+import { Figure, Revision } from '../db/models/literature';
 import { now } from '../people/secrets';
 import type { PlannedEntry } from './checkRows';
 
@@ -81,12 +82,14 @@ type SampleFields = Pick<
 	'source' | 'tooth' | 'root' | 'scope' | 'country' | 'method' | 'subgroup' | 'total'
 >;
 
-/** Samples of these sources that exist already, by what they are. */
+/** Samples of these sources that published entries have, by what they are. */
 async function knownSamples(db: Sequelize, entries: readonly PlannedEntry[]): Promise<Map<string, number>> {
 	const sources = [...new Set(entries.map(({ content }) => content.source))];
 	const rows = await db.query<SampleFields & { id: number }>(
 		`SELECT id, source_id AS source, tooth, root, scope, country, method, subgroup, total FROM sample
-			WHERE source_id IN (SELECT value FROM json_each($sources)) ORDER BY id DESC`,
+			WHERE source_id IN (SELECT value FROM json_each($sources)) AND EXISTS
+				(SELECT 1 FROM entry WHERE entry.sample_id = sample.id AND entry.state IN ('published', 'withdrawn'))
+			ORDER BY id DESC`,
 		{ type: QueryTypes.SELECT, bind: { sources: JSON.stringify(sources) } }
 	);
 	return new Map(rows.map(({ id, ...sample }) => [sampleKey(sample), id]));
@@ -115,7 +118,8 @@ async function writeChunk(
 	const figures: unknown[] = [];
 	for (const { content } of chunk) {
 		const key = sampleKey(content);
-		let sample = samples.get(key) ?? added.get(key);
+		// A draft has a sample of its own, which follows it as it is edited; publishing it finds the one it shares.
+		let sample = job.publish ? (samples.get(key) ?? added.get(key)) : undefined;
 		if (sample === undefined) {
 			sample = sampleId++;
 			added.set(key, sample);
@@ -224,7 +228,7 @@ async function finishChunk(
 	const ids = JSON.stringify(rows.map(({ id }) => id));
 	await Revision.bulkCreate(
 		rows.map(({ id, figures, ...content }) => ({
-			...{ entryId: id, number: 1, at, who: person.name, before: null, why },
+			...{ entryId: id, number: 1, at, who: person.name, whoId: person.id, author: null, before: null, why },
 			after: JSON.stringify({ state, ...content, figures: JSON.parse(figures) as unknown })
 		})),
 		{ transaction }
@@ -234,8 +238,25 @@ async function finishChunk(
 			`UPDATE entry SET state = 'published' WHERE id IN (SELECT value FROM json_each($ids)) AND state = 'draft'`,
 			{ bind: { ids }, transaction }
 		);
+	else await makeDrafts(rows, person, transaction);
 	await db.query('DELETE FROM import_entry WHERE entry_id IN (SELECT value FROM json_each($ids))', {
 		bind: { ids },
 		transaction
 	});
+}
+
+/** As the desk keeps drafts: what they say stands in their revision alone, and somebody works on them. */
+async function makeDrafts(
+	rows: readonly WrittenEntry[],
+	person: ImportJob['person'],
+	transaction: Transaction
+): Promise<void> {
+	await Figure.destroy({ where: { entryId: rows.map(({ id }) => id) }, transaction });
+	await EntryWork.bulkCreate(
+		rows.map(({ id }) => ({
+			...{ entryId: id, state: 'draft' as const, number: 1, authorId: person.id, author: person.name },
+			...{ editors: JSON.stringify([person.id]), at: now() }
+		})),
+		{ transaction }
+	);
 }

@@ -2,17 +2,20 @@
 import { isDeepStrictEqual } from 'node:util';
 import { QueryTypes, type Sequelize, type Transaction } from 'sequelize';
 import { gradeOf, profileOf, type AppraisalAnswers } from '$lib/schemas/appraisal';
+import { sourceDesk as words } from '$lib/strings/sourceDesk';
 import type { KeptSource } from '$lib/schemas/sources';
 import type { AuditAction } from '$lib/schemas/terms';
 import { Problem } from '../api/problem';
 import { SourceAppraisal, SourceRetraction, SourceRevision } from '../db/models/intake';
-import { Source, TableRevision } from '../db/models/literature';
+import { Source } from '../db/models/literature';
 import { recordAudit } from '../people/audit';
 import { now } from '../people/secrets';
 import { normaliseDoi } from './doi';
 import { citable, yearOf } from './citable';
 import type { CslSource } from './literatureFiles';
 import { plain } from './duplicates';
+import { placesOf, type Estimate, type Place } from './estimates';
+import { changeTable } from './publishing';
 import { findSource } from './sources';
 
 /** Who changes something. */
@@ -102,13 +105,14 @@ async function stateOf(source: Source, transaction?: Transaction): Promise<Sourc
 	};
 }
 
-/** Whether any published entry comes from a source: only then does a change of it move the table. */
-async function isUsed(db: Sequelize, id: string, transaction: Transaction): Promise<boolean> {
-	const [{ used }] = await db.query<{ used: number }>(
-		`SELECT EXISTS (SELECT 1 FROM entry WHERE source_id = $id AND state = 'published') AS used`,
-		{ type: QueryTypes.SELECT, bind: { id }, transaction }
+/** Roots that published entries of a source speak of; null if there are none, so that a change of it does not move the table. */
+async function rootsOf(db: Sequelize, id: string): Promise<Place[] | null> {
+	const rows = await db.query<Place>(
+		`SELECT DISTINCT sample.tooth, sample.root FROM entry JOIN sample ON sample.id = entry.sample_id
+			WHERE entry.source_id = $id AND entry.state = 'published'`,
+		{ type: QueryTypes.SELECT, bind: { id } }
 	);
-	return used === 1;
+	return rows.length > 0 ? placesOf(rows) : null;
 }
 
 /**
@@ -143,8 +147,8 @@ export async function createSource(
 }
 
 /**
- * Changes the citation, the retraction or the appraisal of a source, or several of them. What the estimates rest on bumps the table's
- * revision in the same transaction, so no answer can be given from the old state after this returns.
+ * Changes the citation, the retraction or the appraisal of a source, or several of them. What the estimates rest on makes a revision of the
+ * table in the same transaction, so no answer can be given from the old state after this returns.
  * @param expected number of the revision that was edited
  * @returns the number of the new revision (the old one if nothing differs); what stands now if somebody else was first; null for an unknown id
  */
@@ -153,32 +157,68 @@ export async function changeSource(
 	editor: Editor,
 	id: string,
 	expected: number,
-	{ why, ...change }: SourceChange
+	change: SourceChange,
+	estimate?: Estimate
 ): Promise<number | Stale | null> {
-	return db.transaction(async (transaction) => {
-		const source = await Source.findByPk(id, { transaction });
-		if (!source) return null;
-		const revision = await sourceRevisionNumber(id, transaction);
-		const before = await stateOf(source, transaction);
-		if (revision !== expected) return { stale: true, current: before, revision };
-		const after = { ...before, ...change };
-		after.csl = { ...tidied(after.csl), id };
-		if (isDeepStrictEqual(before, after)) return revision;
-		await source.update({ ...columnsOf(after.csl), retracted: after.retraction !== null }, { transaction });
-		const actions = [
-			!isDeepStrictEqual(before.csl, after.csl) && ('source changed' as const),
-			...(await writeRetraction(id, editor, before, after, transaction)),
-			await writeAppraisal(id, editor, before, after, transaction)
-		].filter((action): action is AuditAction => action !== false);
-		await writeRevision(id, revision + 1, editor, before, after, why, transaction);
-		for (const action of actions) await recordAudit({ action, subject: id, detail: why }, transaction);
-		if (movesEstimates(before, after) && (await isUsed(db, id, transaction)))
-			await TableRevision.create(
-				{ at: now(), why: `Source ${id}: ${why}`, seedDigest: null },
-				{ transaction }
-			);
-		return revision + 1;
-	});
+	const source = await Source.findByPk(id);
+	if (!source) return null;
+	const before = await stateOf(source);
+	const places = movesEstimates(before, changed(before, change, id)) ? await rootsOf(db, id) : null;
+	let revision = expected;
+	try {
+		if (places === null) {
+			await db.transaction(async (transaction) => {
+				revision = await writeChange(editor, id, expected, change, transaction);
+			});
+		} else {
+			const write = async (transaction: Transaction) => {
+				revision = await writeChange(editor, id, expected, change, transaction);
+				return { why: words.record(id, change.why), who: editor.name };
+			};
+			await changeTable(db, places, write, estimate);
+		}
+		return revision;
+	} catch (error) {
+		if (error instanceof Beaten) return error.stale;
+		throw error;
+	}
+}
+
+/** Undoes a transaction in which somebody else turns out to have been first. */
+class Beaten extends Error {
+	constructor(readonly stale: Stale) {
+		super('The source was changed meanwhile.');
+	}
+}
+
+function changed(before: SourceState, { why: _, ...change }: SourceChange, id: string): SourceState {
+	const after = { ...before, ...change };
+	return { ...after, csl: { ...tidied(after.csl), id } };
+}
+
+/** @throws Beaten if the revision is not the one expected */
+async function writeChange(
+	editor: Editor,
+	id: string,
+	expected: number,
+	change: SourceChange,
+	transaction: Transaction
+): Promise<number> {
+	const source = await Source.findByPk(id, { transaction, rejectOnEmpty: true });
+	const revision = await sourceRevisionNumber(id, transaction);
+	const before = await stateOf(source, transaction);
+	if (revision !== expected) throw new Beaten({ stale: true, current: before, revision });
+	const after = changed(before, change, id);
+	if (isDeepStrictEqual(before, after)) return revision;
+	await source.update({ ...columnsOf(after.csl), retracted: after.retraction !== null }, { transaction });
+	const actions = [
+		!isDeepStrictEqual(before.csl, after.csl) && ('source changed' as const),
+		...(await writeRetraction(id, editor, before, after, transaction)),
+		await writeAppraisal(id, editor, before, after, transaction)
+	].filter((action): action is AuditAction => action !== false);
+	await writeRevision(id, revision + 1, editor, before, after, change.why, transaction);
+	for (const action of actions) await recordAudit({ action, subject: id, detail: change.why }, transaction);
+	return revision + 1;
 }
 
 /** Whether the estimates, or a filter on them, read something that differs. */
