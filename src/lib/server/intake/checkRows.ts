@@ -2,31 +2,13 @@
 import { createHash } from 'node:crypto';
 import { checkEntry, type Remark } from '$lib/entry/checks';
 import type { EntryContent, EntryText } from '$lib/entry/content';
+import type { Problem, ProblemList } from '$lib/schemas/intake';
 import { intake as words } from '$lib/strings/intake';
 import { originalCell } from '../table/harmlessCells';
 import type { Delimiter, Encoding, Sheet } from './decode';
 import { MOST_PROBLEMS } from './limits';
 import { COLUMNS, faultsOf, useHeadings, type Column, type HeadingUse } from './mapping';
 import { DATE_MARK } from './spreadsheet';
-
-/** Something wrong, or to look at, in one cell. */
-export interface Problem {
-	/** As a spreadsheet numbers it: the headings are row 1. */
-	row: number;
-	/** The heading as the file has it; empty for the row as a whole. */
-	column: string;
-	value: string;
-	message: string;
-}
-
-/** Problems one by one up to a limit, and how many there are. */
-export interface ProblemList {
-	total: number;
-	rows: number;
-	first: Problem[];
-	/** How many by heading. */
-	byColumn: [string, number][];
-}
 
 /** An entry as the file has it: which rows, and what they say. */
 export interface PlannedEntry {

@@ -1,5 +1,6 @@
 /** Imports of tables, from the upload to the last row. */
 import { Op, QueryTypes, type Sequelize, type Transaction } from 'sequelize';
+import type { Problem } from '$lib/schemas/intake';
 import { intake as words } from '$lib/strings/intake';
 import { TableImport, type ImportState } from '../db/models/intake';
 import { log } from '../log';
@@ -9,7 +10,7 @@ import { storage } from '../storage';
 import { harmlessName } from '../storage/uploads';
 import { estimateRoots, placesOf, type Estimate, type Place } from '../table/estimates';
 import { changeTable } from '../table/publishing';
-import type { CheckedRows, PlannedEntry, Problem } from './checkRows';
+import type { CheckedRows, PlannedEntry } from './checkRows';
 import { compareWithTable } from './inTable';
 import { MOST_PROBLEMS } from './limits';
 import { kindOf, readInThread } from './reader';
