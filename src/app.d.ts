@@ -9,6 +9,10 @@ declare global {
 			/** Finds the whole error in the server's log. */
 			id?: string;
 		}
+		interface PageState {
+			/** How many changes of the estimator's page lie before this one in the browser's history. */
+			changes?: number;
+		}
 		interface Locals {
 			requestId: string;
 			preferences: Preferences;
@@ -22,6 +26,10 @@ declare global {
 			viewer: { name: string; email: string; roles: Role[] } | null;
 			/** The installation's name, empty if it has none. */
 			installation: string;
+		}
+		interface PageData {
+			/** From the root layout; absent where even that failed. */
+			preferences?: Preferences;
 		}
 	}
 }

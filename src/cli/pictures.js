@@ -18,6 +18,8 @@ const SCREENS = {
 	premolar: '/teeth/mandibular-first-premolar',
 	root: '/teeth/maxillary-first-molar/MB',
 	narrowed: '/teeth/maxillary-first-molar/MB?method=cbct&minTotal=100',
+	alone: '/teeth/maxillary-first-molar/MB?show=2-1&sort=weight&group=method&open=q4',
+	compare: '/compare',
 	mesial: '/teeth/mandibular-first-molar/M',
 	noEvidence: '/teeth/maxillary-second-premolar/P',
 	join: '/teeth/maxillary-first-molar/MB/join',

@@ -20,7 +20,10 @@ export const TABLE_COLUMNS = [
 ] as const;
 export type TableColumn = (typeof TABLE_COLUMNS)[number];
 
-/** What is shown to those who chose nothing. */
+/**
+ * What is shown to those who chose nothing.
+ * @internal exported for tests
+ */
 export const USUAL_COLUMNS: readonly TableColumn[] = [
 	'measure',
 	'figures',

@@ -10,9 +10,13 @@ interface Estimate {
 }
 type Fates = Record<keyof typeof drawing.fates, Estimate | undefined>;
 interface Answer {
-	prior: { fates: Fates; anotherCanal: Estimate | null };
-	posterior: { fates: Fates; anotherCanal: Estimate | null };
-	steps: { fates: Record<string, number> }[];
+	prior: { fates: Fates; meet: Estimate; anotherCanal: Estimate | null };
+	posterior: { fates: Fates; meet: Estimate; anotherCanal: Estimate | null };
+	steps: {
+		fates: Record<string, number>;
+		intervals: Record<string, [number, number]>;
+		expected: { meet: number; never: number } | null;
+	}[];
 	decision: { advice: string | null };
 	evidence: { studies: number; sources: string[] };
 	notes: string[];
@@ -127,6 +131,7 @@ test('the prior is the answer to the same question without its findings', async 
 		const without = await ask(request, question);
 		expect(prior).toEqual({
 			fates: without.posterior.fates,
+			meet: without.posterior.meet,
 			anotherCanal: without.posterior.anotherCanal
 		});
 		expect(without.prior).toEqual(prior);
@@ -148,6 +153,8 @@ test('the probabilities of the fates sum to one, at every step', async ({ reques
 		expect(Object.values(fates).reduce((sum, mean) => sum + mean, 0)).toBeCloseTo(1, 9);
 	// The account ends where the answer stands.
 	expect(steps[2].fates['shared-exit']).toBeCloseTo(posterior.fates['shared-exit']!.mean, 9);
+	expect(steps[2].intervals['shared-exit']).toEqual(posterior.fates['shared-exit']!.interval);
+	expect(steps.map(({ expected }) => expected!.meet > expected!.never)).toEqual([true, true, false]);
 });
 
 test('an unclear finding changes nothing', async ({ request }) => {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { palette } from '../../tailwind.config';
+import { palette } from '$lib/palette';
 
 /**
  * Contrast of the colours that screens put on each other, by the definition of WCAG 2.2 ("contrast ratio", "relative luminance",

@@ -1,15 +1,26 @@
-import { readFileSync } from 'node:fs';
-import { parse } from 'csv-parse/sync';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { lookUp } from './lookup';
+import { lookUp, type FeaturePlace } from './lookup';
 import { WORDS } from './lookupWords';
 import { positions } from './numbers';
 import { teeth, toothOf } from './teeth';
 
+/** A made-up table: most C-shapes in lower second molars, an isthmus of the mesial root, an extra root. */
+const RECORDED: FeaturePlace[] = [
+	{ feature: 'c-shape', tooth: 'mandibular-second-molar' },
+	{ feature: 'isthmus', tooth: 'mandibular-first-molar', root: 'M' },
+	{ feature: 'c-shape', tooth: 'mandibular-first-premolar' },
+	{ feature: 'c-shape', tooth: 'mandibular-first-molar' },
+	{ feature: 'radix-entomolaris', tooth: 'mandibular-first-molar' },
+	{ feature: 'isthmus', tooth: 'maxillary-first-molar', root: 'MB' },
+	{ feature: 'apical-delta', tooth: 'mandibular-canine', root: 'single' }
+];
+
 /** A hit without its reason: `16 MB` or `maxillary-first-molar`. */
 function short(query: string, system?: Parameters<typeof lookUp>[1]): string[] {
-	return lookUp(query, system).map((hit) => [hit.iso ?? hit.tooth, hit.root].filter(Boolean).join(' '));
+	return lookUp(query, system, RECORDED).map((hit) =>
+		[hit.iso ?? hit.tooth, hit.root].filter(Boolean).join(' ')
+	);
 }
 
 describe('lookUp goes straight to', () => {
@@ -27,6 +38,9 @@ describe('lookUp goes straight to', () => {
 		['universal 16', '28'],
 		['upper left first molar', '26'],
 		['First Molar, upper left', '26'],
+		['molar upper first left', '26'],
+		['left molar, first, upper', '26'],
+		['mésiobuccal root of 16', '16 MB'],
 		['upper right 6', '16'],
 		['maxillary first molar', 'maxillary-first-molar'],
 		['lower 6', 'mandibular-first-molar'],
@@ -58,7 +72,18 @@ describe('lookUp offers', () => {
 		],
 		['middle mesial', ['mandibular-first-molar M', 'mandibular-second-molar M', 'mandibular-third-molar M']],
 		['radix', ['mandibular-first-molar DL', 'mandibular-second-molar DL', 'mandibular-third-molar DL']],
-		['c-shape lower molar', ['mandibular-second-molar', 'mandibular-first-molar', 'mandibular-third-molar']],
+		['c-shape', ['mandibular-second-molar', 'mandibular-first-premolar', 'mandibular-first-molar']],
+		['C shaped canals', ['mandibular-second-molar', 'mandibular-first-premolar', 'mandibular-first-molar']],
+		['c-shape lower molar', ['mandibular-second-molar', 'mandibular-first-molar']],
+		['isthmus', ['mandibular-first-molar M', 'maxillary-first-molar MB']],
+		['istmus upper', ['maxillary-first-molar MB']],
+		['isthmus mesial root', ['mandibular-first-molar M']],
+		['isthmus distal root', []],
+		['extra root', ['mandibular-first-molar']],
+		['extra distolingual root lower', ['mandibular-first-molar']],
+		['apical deltas', ['mandibular-canine single']],
+		// Recorded nowhere: no place is made up.
+		['dens in dente', []],
 		[
 			'premolar',
 			[
@@ -86,13 +111,10 @@ describe('lookUp offers', () => {
 		expect(lookUp(query).some((hit) => hit.exact)).toBe(false);
 	});
 
-	it('the teeth with C-shaped canals that the shipped table records, the lower second molar first', () => {
-		const file = new URL('../../../data/literature/observations.csv', import.meta.url);
-		const rows: Record<string, string>[] = parse(readFileSync(file), { columns: true });
-		const recorded = new Set(rows.filter((row) => row.category === 'c-shape').map((row) => row.tooth));
-		recorded.delete('');
-		expect(short('c-shape')[0]).toBe('mandibular-second-molar');
-		expect(short('C shaped canals').sort()).toEqual([...recorded].sort());
+	it('the tooth with a side and the feature, where both are typed', () => {
+		expect(lookUp('37 c-shape', 'iso', RECORDED)).toMatchObject([
+			{ tooth: 'mandibular-second-molar', iso: '37', feature: 'c-shape', exact: true }
+		]);
 	});
 
 	it('both readings of a bare digit, and says which they are', () => {

@@ -5,6 +5,7 @@
 import Fuse from 'fuse.js';
 import { ordinalOf, readNumber, toothAt } from './lookupNumbers';
 import type { NumberReading } from './lookupNumbers';
+import type { FeatureWord } from './lookupFeatures';
 import { PHRASES, WORDS } from './lookupWords';
 import type { Meaning, RootReading } from './lookupWords';
 import { positions } from './numbers';
@@ -18,13 +19,26 @@ export interface LookUpHit {
 	iso?: string;
 	/** Root where the query names one. */
 	root?: RootId;
+	/** Id of the feature that the query asks for, recorded at this place. */
+	feature?: string;
 	/** How the query was read, for the reader. */
 	why: string;
+	/** False after a misspelling or a word not understood. */
+	understood: boolean;
 	/**
 	 * True when a person who numbers in the given system can mean nothing else, so that a page may go straight
 	 * there. Never on any but the first hit, nor after a misspelling or a word not understood.
 	 */
 	exact: boolean;
+}
+
+/** Where the table records a feature. */
+export interface FeaturePlace {
+	/** Id of the evidence files: `c-shape`. */
+	feature: string;
+	tooth: ToothId;
+	/** Absent: recorded of the whole tooth. */
+	root?: RootId;
 }
 
 const MAX_HITS = 8;
@@ -50,6 +64,7 @@ interface Candidate {
 	position: Position;
 	tooth: Tooth;
 	rootReadings: readonly RootReading[];
+	place?: FeaturePlace;
 }
 
 /**
@@ -57,14 +72,19 @@ interface Candidate {
  *
  * @param query what was typed, in any case and order: `16`, `#3`, `UL6`, `upper left first molar`, `16 mb2`
  * @param system the numbering the person has picked, in which a bare number is read first; default ISO 3950
+ * @param recorded where features are recorded, the place with most samples first; a feature word finds these only
  * @returns at most eight hits, the likeliest first; empty for an empty query or one that names no tooth
  */
-export function lookUp(query: string, system: NumberingSystem = 'iso'): LookUpHit[] {
+export function lookUp(
+	query: string,
+	system: NumberingSystem = 'iso',
+	recorded: readonly FeaturePlace[] = []
+): LookUpHit[] {
 	const read = readQuery(query.slice(0, MAX_QUERY_CHARACTERS));
 	if (read.numbers.length > 1) return [];
 	if (read.numbers.length === 0 && !read.meanings.some(saysSomething)) return [];
 	const readings = read.numbers.length === 0 ? [null] : readingsOf(read, system);
-	const hits = readings.flatMap((reading) => hitsOf(read, reading));
+	const hits = readings.flatMap((reading) => hitsOf(read, reading, recorded));
 	const distinct = hits.filter((hit, index) => hits.findIndex((other) => sameHit(hit, other)) === index);
 	const oneAnswer = distinct.length === 1 || readings.some((reading) => reading?.tellsSide);
 	return distinct
@@ -74,7 +94,8 @@ export function lookUp(query: string, system: NumberingSystem = 'iso'): LookUpHi
 
 function readQuery(text: string): Query {
 	const words = text
-		.normalize('NFKC')
+		.normalize('NFKD')
+		.replace(/\p{M}/gu, '')
 		.toLowerCase()
 		.replace(/['’]/g, '')
 		.replace(/[^\p{L}\p{N}#┘└┐┌]+/gu, ' ');
@@ -139,7 +160,7 @@ function readingsOf(read: Query, picked: NumberingSystem): NumberReading[] {
 }
 
 /** All hits under one reading of the number; without the root where no tooth that fits has it. */
-function hitsOf(read: Query, reading: NumberReading | null): LookUpHit[] {
+function hitsOf(read: Query, reading: NumberReading | null, recorded: readonly FeaturePlace[]): LookUpHit[] {
 	const rootWords = read.meanings.flatMap((meaning) => (meaning.root ? [meaning.root] : []));
 	const fitting = positions
 		.map((position): Candidate => ({ position, tooth: toothAt(position), rootReadings: [] }))
@@ -148,15 +169,21 @@ function hitsOf(read: Query, reading: NumberReading | null): LookUpHit[] {
 				(reading?.matches(position) ?? true) &&
 				read.meanings.every((meaning) => fits(meaning, position, tooth))
 		);
-	const rooted = fitting.flatMap((candidate) => withRoot(candidate, rootWords));
+	const features = read.meanings.flatMap((meaning) => meaning.feature ?? []);
+	const rooted = fitting
+		.flatMap((candidate) => withRoot(candidate, rootWords))
+		.flatMap((candidate) => withFeature(candidate, features, recorded));
 	const narrowed = reading !== null || read.meanings.some(narrowsTeeth);
-	const rootless = rooted.length === 0 && narrowed;
+	const rootless = rooted.length === 0 && narrowed && features.length === 0;
 	const tellsSide = (reading?.tellsSide ?? false) || read.meanings.some((meaning) => meaning.side);
-	const clear = !rootless && !read.corrected && read.unknown.length === 0 && (reading?.certain ?? true);
-	return inOrder(rootless ? fitting : rooted, read.meanings).map((candidate) => ({
+	const understood = !read.corrected && read.unknown.length === 0;
+	const clear = !rootless && understood && (reading?.certain ?? true);
+	return inOrder(rootless ? fitting : rooted, read.meanings, recorded).map((candidate) => ({
 		tooth: candidate.tooth.id,
 		...(tellsSide ? { iso: candidate.position.iso } : {}),
-		...(candidate.rootReadings.length > 0 ? { root: candidate.rootReadings[0].root } : {}),
+		...rootOfHit(candidate),
+		...(candidate.place ? { feature: candidate.place.feature } : {}),
+		understood,
 		why: reasonFor(candidate, read, reading, tellsSide, rootless),
 		exact: clear
 	}));
@@ -168,8 +195,7 @@ function fits(meaning: Meaning, position: Position, tooth: Tooth): boolean {
 		(meaning.side === undefined || meaning.side === position.side) &&
 		(meaning.kind === undefined || meaning.kind === tooth.kind) &&
 		(meaning.place === undefined || meaning.place === tooth.place) &&
-		(meaning.ordinal === undefined || meaning.ordinal === ordinalOf(tooth)) &&
-		(meaning.feature === undefined || meaning.feature.teeth.includes(tooth.id))
+		(meaning.ordinal === undefined || meaning.ordinal === ordinalOf(tooth))
 	);
 }
 
@@ -192,12 +218,39 @@ function withRoot(candidate: Candidate, words: readonly (readonly RootReading[])
 	return rootReadings.length === words.length && agree ? [{ ...candidate, rootReadings }] : [];
 }
 
-/** By the order of a feature's teeth, then by the order of a root word's readings, else as they stand. */
-function inOrder(candidates: readonly Candidate[], meanings: readonly Meaning[]): Candidate[] {
-	const feature = meanings.find((meaning) => meaning.feature)?.feature;
+/** The candidate at each place where one of the features is recorded; nothing where none is, or of another root alone. */
+function withFeature(
+	candidate: Candidate,
+	features: readonly FeatureWord[],
+	recorded: readonly FeaturePlace[]
+): Candidate[] {
+	if (features.length === 0) return [candidate];
+	const asked = candidate.rootReadings[0]?.root;
+	return recorded
+		.filter(
+			({ feature, tooth, root }) =>
+				tooth === candidate.tooth.id &&
+				features.every(({ ids }) => ids.includes(feature)) &&
+				(asked === undefined || root === undefined || root === asked)
+		)
+		.map((place) => ({ ...candidate, place }));
+}
+
+/** The root that was named, else the root at which the feature is recorded. */
+function rootOfHit({ rootReadings, place }: Candidate): { root?: RootId } {
+	const root = place ? place.root : rootReadings.at(0)?.root;
+	return root === undefined ? {} : { root };
+}
+
+/** By the order of a feature's places, then by the order of a root word's readings, else as they stand. */
+function inOrder(
+	candidates: readonly Candidate[],
+	meanings: readonly Meaning[],
+	recorded: readonly FeaturePlace[]
+): Candidate[] {
 	const rootWord = meanings.find((meaning) => meaning.root)?.root;
-	const rank = ({ tooth, rootReadings }: Candidate): number =>
-		feature ? feature.teeth.indexOf(tooth.id) : (rootWord?.indexOf(rootReadings[0]) ?? 0);
+	const rank = ({ place, rootReadings }: Candidate): number =>
+		place ? recorded.indexOf(place) : (rootWord?.indexOf(rootReadings[0]) ?? 0);
 	return [...candidates].sort((a, b) => rank(a) - rank(b));
 }
 
@@ -220,5 +273,5 @@ function reasonFor(
 }
 
 function sameHit(a: LookUpHit, b: LookUpHit): boolean {
-	return a.tooth === b.tooth && a.iso === b.iso && a.root === b.root;
+	return a.tooth === b.tooth && a.iso === b.iso && a.root === b.root && a.feature === b.feature;
 }

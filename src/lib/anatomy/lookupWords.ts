@@ -1,6 +1,7 @@
 /** The words a person may type to find a tooth, and what each one says. */
+import { FEATURE_PHRASES, FEATURE_WORDS, type FeatureWord } from './lookupFeatures';
 import type { NumberingSystem, Side } from './numbers';
-import type { Arch, RootId, ToothId, ToothKind } from './teeth';
+import type { Arch, RootId, ToothKind } from './teeth';
 
 /** One way to read the name of a root or a canal. */
 export interface RootReading {
@@ -8,12 +9,6 @@ export interface RootReading {
 	/** Holds for the teeth of this arch alone; absent: for every tooth that has the root. */
 	arch?: Arch;
 	/** How to say it in a reason: `MB2 is a canal of the mesiobuccal root`. */
-	why: string;
-}
-
-/** Something that is not a root: the teeth it is recorded in, the most telling first. */
-interface FeatureWord {
-	teeth: readonly ToothId[];
 	why: string;
 }
 
@@ -81,30 +76,6 @@ function mesiobuccalCanal(number: number): Meaning {
 	return rootWord('MB', `MB${number} is a canal of the mesiobuccal root`);
 }
 
-/** Teeth in which the literature table records C-shaped canals, by the number of its rows. */
-const C_SHAPE: Meaning = {
-	feature: {
-		why: 'C-shaped canals are recorded here',
-		teeth: [
-			'mandibular-second-molar',
-			'mandibular-first-premolar',
-			'mandibular-first-molar',
-			'mandibular-second-premolar',
-			'mandibular-third-molar',
-			'maxillary-first-molar',
-			'maxillary-second-molar',
-			'maxillary-third-molar'
-		]
-	}
-};
-
-const RADIX_PARAMOLARIS: Meaning = {
-	feature: {
-		why: 'the radix paramolaris, an extra buccal root, is recorded here',
-		teeth: ['mandibular-first-molar', 'mandibular-second-molar']
-	}
-};
-
 /** Spellings of several words that say one thing, turned into the one word that `WORDS` knows. */
 export const PHRASES: readonly (readonly [pattern: RegExp, word: string])[] = [
 	[/(upper|lower|maxillary|mandibular|left|right|first|second|third|central|lateral)(?=\p{L}{3})/gu, '$1 '],
@@ -122,8 +93,7 @@ export const PHRASES: readonly (readonly [pattern: RegExp, word: string])[] = [
 	[/mb2(?!\d)/g, ' mbtwo '],
 	[/mb3(?!\d)/g, ' mbthree '],
 	[/\bradix entomolaris\b/g, 'radix'],
-	[/\bradix paramolaris\b/g, 'paramolaris'],
-	[/\bc shaped?\b/g, 'cshape'],
+	...FEATURE_PHRASES,
 	[/\beye (tooth|teeth)\b/g, 'canine']
 ];
 
@@ -198,9 +168,7 @@ export const WORDS: ReadonlyMap<string, Meaning> = new Map<string, Meaning>([
 	['middlemesial', MIDDLE_MESIAL],
 	['middledistal', MIDDLE_DISTAL],
 	['single', rootWord('single', 'single root')],
-	['cshape', C_SHAPE],
-	['cshaped', C_SHAPE],
-	['paramolaris', RADIX_PARAMOLARIS],
+	...FEATURE_WORDS.map(([word, feature]): [string, Meaning] => [word, { feature }]),
 	...[
 		'tooth',
 		'teeth',

@@ -1,8 +1,7 @@
-import { readFileSync } from 'node:fs';
 import { LEAVES, describeSequence } from '$lib/anatomy/sequence';
-import { parse } from 'csv-parse/sync';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { tableSequences } from '../../../tests/support/tableSequences';
 import { courseOf, runsPath, sampleRun } from './canalCourse';
 import { halfWidthAt, type RootFrame } from './rootShape';
 
@@ -64,19 +63,6 @@ const DRAWN: [string, string][] = [
 		'M30.5,0C30.5,17.5,33.89,17.5,33.89,35C33.89,43.4,31.56,43.4,31.56,51.8C31.56,52.5,31.84,52.5,31.84,53.2C31.84,61.6,50,61.6,50,70C50,85,50,85,50,100M33.89,35C33.89,43.4,50,43.4,50,51.8C50,52.5,50,52.5,50,53.2C50,61.6,50,61.6,50,70M69.5,0C69.5,17.5,66.11,17.5,66.11,35C66.11,43.4,68.44,43.4,68.44,51.8C68.44,52.5,68.16,52.5,68.16,53.2C68.16,61.6,50,61.6,50,70'
 	]
 ];
-
-interface Observation {
-	measure: string;
-	category: string;
-}
-
-/** Every canal sequence that the shipped table names. */
-function tableSequences(): string[] {
-	const csv = readFileSync('data/literature/observations.csv', 'utf8');
-	const rows = parse<Observation>(csv, { columns: true });
-	const categories = rows.filter((row) => row.measure === 'configuration').map((row) => row.category);
-	return [...new Set(categories)].filter((category) => category !== 'other');
-}
 
 /** The cubic pieces of a path string, one list for each subpath: x and y of both ends and of the two points between. */
 function cubics(path: string): number[][][] {

@@ -1,5 +1,8 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { layoutExpectation, type ExpectationData } from './expectation';
+import { tableSequences } from '../../../tests/support/tableSequences';
+import { drawing } from '$lib/strings/drawing';
+import { heightFor, layoutExpectation, type ExpectationData, type ExpectationLayout } from './expectation';
 import { layoutSequence } from './sequenceGlyph';
 
 const SIZE = { width: 372, height: 500 };
@@ -59,7 +62,8 @@ describe('layoutExpectation', () => {
 		const sequences = [{ sequence: '2-1', probability: 0.004, joinLevelMm: 3 }];
 		const layout = layoutExpectation(data({ sequences }), SIZE);
 		expect(layout.meetings[0].opacity).toBe(0);
-		expect(layout.notes).toEqual([]);
+		// Kept for when the sequence is shown alone.
+		expect(layout.notes.map(({ opacity, sequences: of }) => [opacity, of])).toEqual([[0, ['2-1']]]);
 	});
 
 	it('notes the published level at its height', () => {
@@ -95,6 +99,156 @@ describe('layoutExpectation', () => {
 		const layout = layoutExpectation(data({ sequences: [] }), SIZE);
 		expect(layout).toMatchObject({ streams: [], meetings: [], notes: [] });
 		expect(layout.root.outline).toMatch(/^M/);
+	});
+});
+
+/** A text's box in the drawing's units. */
+interface Box {
+	text: string;
+	left: number;
+	right: number;
+	top: number;
+	bottom: number;
+}
+
+const FONT_PX = 14;
+
+/** Width of a text in Noto Sans, rather too wide than too narrow (widths of letters from memory of the font's metrics). */
+function widthOf(text: string): number {
+	const em = [...text].map((letter) =>
+		/[mwMW%]/.test(letter) ? 0.95 : /[iljtfr., \u00a0]/.test(letter) ? 0.42 : 0.62
+	);
+	return FONT_PX * em.reduce((sum, each) => sum + each, 0);
+}
+
+/** Boxes of all words of a drawing, placed as RootPicture and RootRuler place them. */
+function boxesOf({ notes, ruler, words }: ExpectationLayout, isolated: string | null = null): Box[] {
+	const box = (text: string, x: number, baseline: number, end = false): Box => ({
+		text,
+		left: end ? x - widthOf(text) : x,
+		right: end ? x : x + widthOf(text),
+		top: baseline - FONT_PX * 0.78,
+		bottom: baseline + FONT_PX * 0.25
+	});
+	const texts = drawing.expectation;
+	const seen = notes.filter(({ opacity, sequences }) =>
+		isolated === null ? opacity > 0 : sequences.includes(isolated)
+	);
+	return [
+		...seen.flatMap(({ levelMm, range, x, y }) => {
+			const lines = levelMm === null ? texts.levelNotPublished : texts.levelPublished(levelMm, range?.mm);
+			return lines.map((text, i) => box(text, x, y + FONT_PX * (i * 1.15 - 0.15)));
+		}),
+		...(ruler
+			? [
+					...ruler.ticks.flatMap(({ label, y }) =>
+						label === null ? [] : [box(label, ruler.x - 14, y + FONT_PX * 0.35, true)]
+					),
+					box(texts.rulerUnit, ruler.x + 2, ruler.top - FONT_PX * 0.8, true)
+				]
+			: []),
+		...(words
+			? [
+					box(texts.orifices, words.x, words.orificesY + FONT_PX * 0.35),
+					box(texts.rootEnd, words.rootEndX, words.rootEndY + FONT_PX * 0.35)
+				]
+			: [])
+	];
+}
+
+const apart = (a: Box, b: Box) =>
+	a.right <= b.left || b.right <= a.left || a.bottom <= b.top || b.bottom <= a.top;
+
+/** Words that leave the drawing or lie on others. */
+function faultsOf(layout: ExpectationLayout, isolated: string | null = null): string[] {
+	const boxes = boxesOf(layout, isolated);
+	const outside = boxes.filter(
+		({ left, right, top, bottom }) => left < 0 || top < 0 || right > layout.width || bottom > layout.height
+	);
+	const overlaid = boxes.flatMap((a, i) =>
+		boxes.slice(i + 1).flatMap((b) => (apart(a, b) ? [] : [`"${a.text}" on "${b.text}"`]))
+	);
+	return [...outside.map(({ text }) => `"${text}" outside`), ...overlaid];
+}
+
+/** From the shortest to the longest root of the table, and beyond. */
+const anyLength = fc.double({ min: 6, max: 32, noNaN: true });
+
+describe('the ruler at any size', () => {
+	it('has a millimetre of the root for a millimetre, in any drawing of any root', () => {
+		fc.assert(
+			fc.property(
+				fc.integer({ min: 240, max: 1600 }),
+				fc.integer({ min: 200, max: 2400 }),
+				anyLength,
+				fc.double({ min: 0.3, max: 5, noNaN: true }),
+				(width, height, rootLengthMm, levelMm) => {
+					const sequences = [
+						{ sequence: '1', probability: 0.5, joinLevelMm: null },
+						{ sequence: '2-1', probability: 0.5, joinLevelMm: levelMm }
+					];
+					const layout = layoutExpectation(data({ sequences, rootLengthMm }), { width, height });
+					const { ticks } = layout.ruler!;
+					const mm = ticks[0].y - ticks[1].y;
+					const steps = ticks.slice(1).map((tick, i) => ticks[i].y - tick.y);
+					expect(Math.max(...steps.map((step) => Math.abs(step - mm)))).toBeLessThan(1e-6);
+					const [, top, ...rest] = numbersOf(layout.streams[0].path);
+					expect(Math.abs(rest[rest.length - 1] - top - rootLengthMm * mm)).toBeLessThan(0.02);
+					expect(Math.abs(ticks[0].y - layout.meetings[0].y - levelMm * mm)).toBeLessThan(0.01);
+				}
+			),
+			{ numRuns: 100 }
+		);
+	});
+
+	it('is the same in two drawings of different roots side by side', () => {
+		const scaleOf = (rootLengthMm: number) => {
+			const height = heightFor(rootLengthMm, 21.4, 500);
+			const { ticks } = layoutExpectation(data({ rootLengthMm }), { width: 372, height }).ruler!;
+			return ticks[0].y - ticks[1].y;
+		};
+		expect(heightFor(21.4, 21.4, 500)).toBeCloseTo(500, 9);
+		expect(scaleOf(9.3)).toBeCloseTo(scaleOf(21.4), 9);
+	});
+});
+
+describe('the words of a drawing', () => {
+	const tenth = (from: number, to: number) => fc.integer({ min: from * 10, max: to * 10 }).map((n) => n / 10);
+
+	it('never lie on each other or leave the drawing, whatever the root', () => {
+		const names = tableSequences();
+		fc.assert(
+			fc.property(
+				fc.uniqueArray(fc.constantFrom(...names), { minLength: 1 }),
+				anyLength,
+				fc.option(tenth(0.5, 9.5), { nil: null }),
+				fc.boolean(),
+				(chosen, rootLengthMm, level, ranged) => {
+					const sequences = chosen.map((sequence, i) => ({
+						sequence,
+						probability: i % 3 === 2 ? 0.001 : 1 / chosen.length,
+						joinLevelMm: i % 2 === 0 ? level : null
+					}));
+					const joinRangeMm: [number, number] | null =
+						ranged && level !== null ? [Math.max(0.5, level - 1), Math.min(9.5, level + 1)] : null;
+					const layout = layoutExpectation(data({ sequences, rootLengthMm, joinRangeMm }), SIZE);
+					expect([null, ...chosen].flatMap((sequence) => faultsOf(layout, sequence))).toEqual([]);
+				}
+			),
+			{ numRuns: 100 }
+		);
+	});
+
+	it('stay apart in the worst root: every sequence of the table, a range of levels near the root end', () => {
+		const sequences = tableSequences().map((sequence, i) => ({
+			sequence,
+			probability: 0.05,
+			joinLevelMm: i % 2 === 0 ? 0.5 : null
+		}));
+		for (const joinRangeMm of [null, [0.5, 4.5] as const])
+			expect(faultsOf(layoutExpectation(data({ sequences, joinRangeMm, rootLengthMm: 9 }), SIZE))).toEqual(
+				[]
+			);
 	});
 });
 

@@ -1,6 +1,7 @@
 import { line, curveBasis, scaleLinear } from 'd3';
 import { courseOf, runsPath, type CanalCourse } from './canalCourse';
 import { layoutMeetingMark, type MeetingMark } from './meetingMark';
+import { layoutNotes, type LevelNote } from './levelNotes';
 import { halfWidthAt, outlinePath, place, type RootFrame } from './rootShape';
 
 /** One sequence of a root with its probability (0..1) and the level where its canals last meet, mm above the root end. */
@@ -21,6 +22,8 @@ export interface ExpectationData {
 	sequences: readonly ExpectedSequence[];
 	rootLengthMm: number;
 	lengthStanding: LengthStanding;
+	/** Sequences that samples name and that have no probability of their own: drawn only when shown alone. */
+	alsoSeen?: readonly { sequence: string; joinLevelMm: number | null }[];
 	/** Where the published level of the confluence is a range, mm, the levels given with the sequences being its middle. */
 	joinRangeMm?: readonly [number, number] | null;
 }
@@ -45,17 +48,6 @@ export interface ExpectationStream {
 interface ExpectationMeeting extends MeetingMark {
 	sequences: string[];
 	opacity: number;
-}
-
-/** A level beside the drawing; `levelMm` null: the level is not published. */
-interface LevelNote {
-	levelMm: number | null;
-	/** The line from the meeting to the words. */
-	leader: string;
-	/** A bracket over the published range of levels; null where there is none. */
-	range: { mm: readonly [number, number]; bracket: string } | null;
-	x: number;
-	y: number;
 }
 
 interface RulerTick {
@@ -91,9 +83,12 @@ const FAINTEST_MEETING = 0.35;
 /** Half the width at the orifices as a part of the length: schematic, near the proportions of a molar root. */
 const HALF_WIDTH_TO_LENGTH = 0.27;
 const LABEL_EVERY_MM = 5;
-/** Least distance between two notes, in units of the drawing (two lines of words). */
-const NOTE_GAP = 44;
 const FULL = { left: 48, right: 116, top: 46, bottom: 30 };
+
+/** All that is drawn: the sequences, then those that are seen only alone. */
+interface DrawnData extends ExpectationData {
+	drawn: readonly Omit<ExpectedSequence, 'interval'>[];
+}
 
 function streamOpacity(probability: number): number {
 	if (probability < SHOWN_FROM) return Math.max(0, probability);
@@ -109,6 +104,17 @@ function frameOf(size: DrawingSize, lengthMm: number): { frame: RootFrame; y: (m
 	const room = (size.width - margin.left - margin.right) / 2;
 	const halfWidth = Math.min(room, length * HALF_WIDTH_TO_LENGTH);
 	return { frame: { centre: margin.left + room, halfWidth, yOf: (h) => y(h * lengthMm) }, y };
+}
+
+/**
+ * Height of a drawing in which a root of this length is drawn to the scale of a longer one.
+ *
+ * @param longestMm length of the root whose drawing is `tallest` units high, mm
+ * @returns so that a millimetre is as long in both drawings
+ */
+export function heightFor(lengthMm: number, longestMm: number, tallest: number): number {
+	const margins = FULL.top + FULL.bottom;
+	return margins + ((tallest - margins) * lengthMm) / longestMm;
 }
 
 /** The pulp chamber above the orifices: a pool in the valley's head. */
@@ -160,14 +166,14 @@ function rulerOf(frame: RootFrame, y: (mm: number) => number, lengthMm: number):
  * together: a mark is small, and where canals may meet has to be found at a glance.
  */
 function meetingsOf(
-	data: ExpectationData,
+	data: DrawnData,
 	courses: CanalCourse[],
 	frame: RootFrame,
 	radius: number
 ): ExpectationMeeting[] {
 	const marks = new Map<string, { mark: MeetingMark; sequences: string[]; probability: number }>();
 	courses.forEach((course, i) => {
-		const { sequence, probability } = data.sequences[i];
+		const { sequence, probability } = data.drawn[i];
 		for (const meeting of course.meetings) {
 			const [x, y] = place(frame, meeting);
 			const key = `${x.toFixed(1)} ${y.toFixed(1)}`;
@@ -190,78 +196,23 @@ function meetingsOf(
 	}));
 }
 
-/** A bracket beside the root, from the highest to the lowest published level. */
-function rangeOf(
-	{ joinRangeMm, rootLengthMm }: ExpectationData,
-	frame: RootFrame,
-	x: number
-): LevelNote['range'] {
-	if (!joinRangeMm) return null;
-	const [bottom, top] = joinRangeMm.map((level) => frame.yOf(level / rootLengthMm));
-	const bracket = line().digits(2)([
-		[x - 5, top],
-		[x, top],
-		[x, bottom],
-		[x - 5, bottom]
-	]);
-	return { mm: joinRangeMm, bracket: bracket ?? '' };
-}
-
-/** One note for each level at which canals last meet, from the top down, kept apart from each other. */
-function notesOf(
-	data: ExpectationData,
-	courses: CanalCourse[],
-	frame: RootFrame,
-	width: number
-): LevelNote[] {
-	const levels = new Map<number, { levelMm: number | null; x: number }>();
-	courses.forEach((course, i) => {
-		if (data.sequences[i].probability < SHOWN_FROM) return;
-		const published = course.runs.every((run) => !run.unpublished);
-		for (const meeting of course.meetings.filter((m) => m.last)) {
-			const [x] = place(frame, meeting);
-			const known = levels.get(meeting.height);
-			const levelMm = published ? data.sequences[i].joinLevelMm : null;
-			levels.set(meeting.height, { levelMm, x: Math.max(x, known?.x ?? x) });
-		}
-	});
-	const left = width - FULL.right + 10;
-	let free = -Infinity;
-	return [...levels.entries()]
-		.sort(([a], [b]) => b - a)
-		.map(([height, { levelMm, x }]) => {
-			const from = frame.yOf(height);
-			const y = Math.max(from, free);
-			free = y + NOTE_GAP;
-			const draw = line().digits(2);
-			const leader = draw([
-				[x + 10, from],
-				[left - 18, from],
-				[left - 5, y]
-			]);
-			return {
-				levelMm,
-				leader: leader ?? '',
-				range: levelMm === null ? null : rangeOf(data, frame, left - 18),
-				x: left,
-				y
-			};
-		});
-}
-
 /**
  * The expectation drawing of one root: every sequence drawn over the others, as strong as it is probable, in a root
  * whose heights are to scale (1 mm of the ruler is 1 mm of the root; widths are schematic).
  *
- * @param data probabilities 0..1; lengths in mm; a level outside the root counts as not published
+ * @param given probabilities 0..1; lengths in mm; a level outside the root counts as not published
  * @throws RangeError when the root's length is not a positive number
  */
-export function layoutExpectation(data: ExpectationData, size: DrawingSize): ExpectationLayout {
+export function layoutExpectation(given: ExpectationData, size: DrawingSize): ExpectationLayout {
+	const data: DrawnData = {
+		...given,
+		drawn: [...given.sequences, ...(given.alsoSeen ?? []).map((seen) => ({ ...seen, probability: 0 }))]
+	};
 	if (!(data.rootLengthMm > 0) || !Number.isFinite(data.rootLengthMm)) {
 		throw new RangeError('The length of a root is a positive number of millimetres.');
 	}
 	const { frame, y } = frameOf(size, data.rootLengthMm);
-	const courses = data.sequences.map(({ sequence, joinLevelMm }) =>
+	const courses = data.drawn.map(({ sequence, joinLevelMm }) =>
 		courseOf(sequence, joinLevelMm === null ? null : joinLevelMm / data.rootLengthMm)
 	);
 	const outline = outlinePath(frame);
@@ -277,7 +228,7 @@ export function layoutExpectation(data: ExpectationData, size: DrawingSize): Exp
 		},
 		chamber: chamberOf(frame, frame.yOf(1)),
 		ruler: size.compact ? null : rulerOf(frame, y, data.rootLengthMm),
-		streams: data.sequences.map(({ sequence, probability }, i) => ({
+		streams: data.drawn.map(({ sequence, probability }, i) => ({
 			sequence,
 			probability,
 			opacity: streamOpacity(probability),
@@ -291,7 +242,13 @@ export function layoutExpectation(data: ExpectationData, size: DrawingSize): Exp
 			)
 		})),
 		meetings: meetingsOf(data, courses, frame, size.compact ? Math.max(2.5, size.width * 0.07) : 8),
-		notes: size.compact ? [] : notesOf(data, courses, frame, size.width),
+		notes: size.compact
+			? []
+			: layoutNotes(data, courses, frame, {
+					left: size.width - FULL.right + 10,
+					height: size.height,
+					shownFrom: SHOWN_FROM
+				}),
 		strokeWidth: size.compact ? Math.max(1.5, size.width * 0.045) : 7,
 		words: size.compact
 			? null

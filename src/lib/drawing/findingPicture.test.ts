@@ -7,9 +7,11 @@ import { layoutRiverMark } from './riverMark';
 const coordinates = (path: string) => [...path.matchAll(/[ML](-?[\d.]+),(-?[\d.]+)/g)];
 
 describe('layoutFindingPicture', () => {
-	it.each(TESTS)('draws %s inside its picture, with the meeting marked', (finding) => {
-		const layout = layoutFindingPicture(finding);
-		expect(layout.meetings).toHaveLength(1);
+	const both = TESTS.flatMap((finding) => [[finding, 'positive'] as const, [finding, 'negative'] as const]);
+
+	it.each(both)('draws %s, %s inside its picture, with a meeting where there is one', (finding, result) => {
+		const layout = layoutFindingPicture(finding, result);
+		expect(layout.meetings).toHaveLength(result === 'positive' ? 1 : 0);
 		for (const { path } of layout.shapes) {
 			expect(path).not.toMatch(/NaN|undefined|\.\d{4}/);
 			for (const [, x, y] of coordinates(path)) {
@@ -19,6 +21,12 @@ describe('layoutFindingPicture', () => {
 				expect(Number(y)).toBeLessThanOrEqual(layout.height);
 			}
 		}
+	});
+
+	it.each(TESTS)('draws a positive and a negative %s apart', (finding) => {
+		const paths = (result: 'positive' | 'negative') =>
+			layoutFindingPicture(finding, result).shapes.map(({ path }) => path);
+		expect(paths('positive')).not.toEqual(paths('negative'));
 	});
 
 	it('puts the nick of the withdrawn cone as high as the meeting', () => {

@@ -8,6 +8,9 @@ import { outlinePath, place, type RootFrame, type RootPoint } from './rootShape'
 export type PicturedFinding =
 	'cone-mark' | 'draw' | 'file-contact' | 'two-files' | 'angled-radiograph' | 'cbct-reading';
 
+/** What the test showed: that the canals meet, or that they do not. */
+type PicturedResult = 'positive' | 'negative';
+
 /** What a shape of a picture stands for; the component gives each its colour. */
 export type PictureTone =
 	'valley' | 'stream' | 'canal' | 'drained' | 'cone' | 'tool' | 'handle' | 'guide' | 'arrow' | 'film';
@@ -38,41 +41,44 @@ interface Scene {
 	frame: RootFrame;
 	valley: PictureShape;
 	streams: PictureShape;
-	/** From above the orifice to the exit, and to the meeting. */
-	leftToEnd: Track;
-	rightToMeeting: Track;
-	meeting: [number, number];
+	/** From above the orifice to the exit; the second to the meeting, where there is one. */
+	left: Track;
+	right: Track;
+	meetings: MeetingMark[];
+	/** Height of the meeting, or where it would have been. */
+	meetingY: number;
 }
 
-/** Two canals that meet, drawn as streams or, pale, as canals that hold instruments. */
-function sceneAt(centre: number, halfWidth: number, tone: 'stream' | 'canal'): Scene {
+const mark = ([x, y]: [number, number]) => layoutMeetingMark(x, y, 7);
+
+/** Two canals, meeting or apart, drawn as streams or, pale, as canals that hold instruments. */
+function sceneAt(centre: number, halfWidth: number, tone: 'stream' | 'canal', meet: boolean): Scene {
 	const frame: RootFrame = { centre, halfWidth, yOf: (h) => END - h * (END - TOP) };
-	const course = courseOf('2-1', JOIN_HEIGHT);
+	const course = courseOf(meet ? '2-1' : '2', JOIN_HEIGHT);
 	const standing = (points: RootPoint[]) => [{ ...points[0], height: 1.2 }, ...points];
 	const [left, right] = course.runs;
 	return {
 		frame,
 		valley: { tone: 'valley', path: `${outlinePath(frame)}Z` },
 		streams: { tone, path: runsPath(frame, course.runs) },
-		leftToEnd: evenTrack(sampleRun(frame, standing(left.points), PIECES), SPACING),
-		rightToMeeting: evenTrack(sampleRun(frame, standing(right.points), PIECES), SPACING),
-		meeting: place(frame, course.meetings[0])
+		left: evenTrack(sampleRun(frame, standing(left.points), PIECES), SPACING),
+		right: evenTrack(sampleRun(frame, standing(right.points), PIECES), SPACING),
+		meetings: course.meetings.map((meeting) => mark(place(frame, meeting))),
+		meetingY: frame.yOf(JOIN_HEIGHT)
 	};
 }
 
-const mark = ([x, y]: [number, number]) => layoutMeetingMark(x, y, 7);
 const handle = (track: Track): PictureShape => ({
 	tone: 'handle',
 	path: handlePath(track[0][0], track[0][1], 8, 9)
 });
 const segment = (...points: [number, number][]) => line().digits(2)(points) ?? '';
 
-function coneMark(): Omit<FindingPictureLayout, 'width' | 'height'> {
-	const scene = sceneAt(46, 34, 'canal');
-	const cone = scene.leftToEnd;
-	const file = scene.rightToMeeting;
-	const [meetingX, meetingY] = scene.meeting;
-	// Beside the root the cone as it comes out, tip level with the root end: its nick is as high as the meeting.
+type Picture = Omit<FindingPictureLayout, 'width' | 'height'>;
+
+function coneMark(meet: boolean): Picture {
+	const { valley, streams, left, right, meetings, meetingY } = sceneAt(46, 34, 'canal', meet);
+	// Beside the root the cone as it comes out, tip level with the root end: a nick is as high as the meeting.
 	const out = { x: 102, head: 5.5, tip: 1.8, top: 18 };
 	const half = (y: number) => out.tip + ((out.head - out.tip) * (END - y)) / (END - out.top);
 	const nick: [number, number][] = [-3.5, 0, 3.5].map((dy) => [
@@ -81,39 +87,45 @@ function coneMark(): Omit<FindingPictureLayout, 'width' | 'height'> {
 	]);
 	const taken = segment(
 		[out.x - out.head, out.top],
-		...nick,
+		...(meet ? nick : []),
 		[out.x - out.tip, END],
 		[out.x + out.tip, END],
 		[out.x + out.head, out.top]
 	);
+	const distance: PictureShape[] = [
+		{ tone: 'guide', path: segment([(meetings[0]?.x ?? 0) + 9, meetingY], [out.x - 6, meetingY]) },
+		{ tone: 'arrow', path: arrowPath([out.x + 11, meetingY + 10], [out.x + 11, meetingY + 1], 4) },
+		{ tone: 'arrow', path: arrowPath([out.x + 11, END - 10], [out.x + 11, END], 4) }
+	];
 	return {
 		shapes: [
-			scene.valley,
-			scene.streams,
-			{ tone: 'cone', path: conePath([[cone[0][0], cone[0][1] - 14], ...cone], 4.6, 1.6) },
-			{ tone: 'tool', path: filePath(file.slice(0, -1), FLUTE) },
-			handle(file),
+			valley,
+			streams,
+			{ tone: 'cone', path: conePath([[left[0][0], left[0][1] - 14], ...left], 4.6, 1.6) },
+			{ tone: 'tool', path: filePath(right.slice(0, -1), FLUTE) },
+			handle(right),
 			{ tone: 'cone', path: `${taken}Z` },
-			{ tone: 'guide', path: segment([meetingX + 9, meetingY], [out.x - 6, meetingY]) },
-			{ tone: 'arrow', path: arrowPath([out.x + 11, meetingY + 10], [out.x + 11, meetingY + 1], 4) },
-			{ tone: 'arrow', path: arrowPath([out.x + 11, END - 10], [out.x + 11, END], 4) }
+			...(meet ? distance : [])
 		],
-		meetings: [mark(scene.meeting)]
+		meetings
 	};
 }
 
-function draw(): Omit<FindingPictureLayout, 'width' | 'height'> {
-	const scene = sceneAt(60, 36, 'stream');
-	const [leftX] = scene.leftToEnd[0];
-	const [rightX] = scene.rightToMeeting[0];
-	const fallen = scene.rightToMeeting.filter(([, y]) => y >= TOP && y <= TOP + 24);
+function draw(meet: boolean): Picture {
+	const { valley, streams, left, right, meetings } = sceneAt(60, 36, 'stream', meet);
+	const [leftX] = left[0];
+	const [rightX] = right[0];
+	const fallen = right.filter(([, y]) => y >= TOP && y <= TOP + 24);
+	const fall: PictureShape[] = [
+		{ tone: 'drained', path: segment(...fallen) },
+		{ tone: 'arrow', path: arrowPath([rightX + 9, TOP + 2], [rightX + 9, TOP + 23], 6) }
+	];
 	return {
 		shapes: [
-			scene.valley,
-			scene.streams,
-			{ tone: 'drained', path: segment(...fallen) },
+			valley,
+			streams,
+			...(meet ? fall : []),
 			{ tone: 'guide', path: segment([rightX - 9, TOP], [rightX + 13, TOP]) },
-			{ tone: 'arrow', path: arrowPath([rightX + 9, TOP + 2], [rightX + 9, TOP + 23], 6) },
 			{ tone: 'tool', path: segment([leftX, TOP + 12], [leftX, TOP - 10]) },
 			{ tone: 'cone', path: handlePath(leftX, TOP - 9, 11, 18) },
 			{ tone: 'handle', path: handlePath(leftX, TOP - 18, 11, 3) },
@@ -121,25 +133,26 @@ function draw(): Omit<FindingPictureLayout, 'width' | 'height'> {
 			{ tone: 'tool', path: segment([leftX - 5, TOP - 34], [leftX + 5, TOP - 34]) },
 			{ tone: 'arrow', path: arrowPath([leftX - 14, TOP - 9], [leftX - 14, TOP - 31], 6) }
 		],
-		meetings: [mark(scene.meeting)]
+		meetings
 	};
 }
 
-function fileContact(): Omit<FindingPictureLayout, 'width' | 'height'> {
-	const scene = sceneAt(48, 34, 'canal');
-	const [left, right] = [scene.leftToEnd, scene.rightToMeeting];
+function fileContact(meet: boolean): Picture {
+	const { valley, streams, left, right, meetings } = sceneAt(48, 34, 'canal', meet);
 	const meter = { x: 102, y: 56, radius: 11 };
+	// The needle swings over where metal touches metal and lies low where it does not.
+	const needle = meet ? [5, -5] : [-7, 2];
 	const dial = pathRound(2);
 	dial.arc(meter.x, meter.y, meter.radius, 0, 2 * Math.PI);
 	dial.moveTo(meter.x, meter.y + 4);
-	dial.lineTo(meter.x + 5, meter.y - 5);
+	dial.lineTo(meter.x + needle[0], meter.y + needle[1]);
 	const wire = pathRound(2);
 	wire.moveTo(right[0][0] + 4, right[0][1] - 7);
 	wire.bezierCurveTo(meter.x, right[0][1] - 7, meter.x, right[0][1] - 4, meter.x, meter.y - meter.radius);
 	return {
 		shapes: [
-			scene.valley,
-			scene.streams,
+			valley,
+			streams,
 			{ tone: 'tool', path: filePath(left, FLUTE) },
 			{ tone: 'tool', path: filePath(right, FLUTE) },
 			handle(left),
@@ -147,38 +160,39 @@ function fileContact(): Omit<FindingPictureLayout, 'width' | 'height'> {
 			{ tone: 'arrow', path: wire.toString() },
 			{ tone: 'arrow', path: dial.toString() }
 		],
-		meetings: [mark(scene.meeting)]
+		meetings
 	};
 }
 
-function twoFiles(): Omit<FindingPictureLayout, 'width' | 'height'> {
-	const scene = sceneAt(54, 36, 'canal');
-	const left = scene.leftToEnd;
+function twoFiles(meet: boolean): Picture {
+	const { valley, streams, left, right, meetings } = sceneAt(54, 36, 'canal', meet);
 	// The second file stops where the first lies, so that its handle stands out by what it is short.
-	const lift = 10;
-	const right = scene.rightToMeeting.slice(0, -3);
-	const raised: Track = [[right[0][0], right[0][1] - lift], ...right];
+	const lift = meet ? 10 : 0;
+	const second: Track = meet ? [[right[0][0], right[0][1] - lift], ...right.slice(0, -3)] : right;
 	const [x, y] = left[0];
-	const gaugeX = raised[0][0] + 14;
+	const gaugeX = second[0][0] + 14;
+	const short: PictureShape[] = [
+		{ tone: 'guide', path: segment([second[0][0] + 6, y - lift], [gaugeX + 8, y - lift]) },
+		{ tone: 'arrow', path: arrowPath([gaugeX, y + 9], [gaugeX, y + 1], 4) },
+		{ tone: 'arrow', path: arrowPath([gaugeX, y - lift - 9], [gaugeX, y - lift - 1], 4) }
+	];
 	return {
 		shapes: [
-			scene.valley,
-			scene.streams,
+			valley,
+			streams,
 			{ tone: 'tool', path: filePath(left, FLUTE) },
-			{ tone: 'tool', path: filePath(raised, FLUTE) },
+			{ tone: 'tool', path: filePath(second, FLUTE) },
 			handle(left),
-			handle(raised),
+			handle(second),
 			{ tone: 'guide', path: segment([x - 10, y], [gaugeX + 8, y]) },
-			{ tone: 'guide', path: segment([raised[0][0] + 6, y - lift], [gaugeX + 8, y - lift]) },
-			{ tone: 'arrow', path: arrowPath([gaugeX, y + 9], [gaugeX, y + 1], 4) },
-			{ tone: 'arrow', path: arrowPath([gaugeX, y - lift - 9], [gaugeX, y - lift - 1], 4) }
+			...(meet ? short : [])
 		],
-		meetings: [mark(scene.meeting)]
+		meetings
 	};
 }
 
-function angledRadiograph(): Omit<FindingPictureLayout, 'width' | 'height'> {
-	const scene = sceneAt(78, 26, 'stream');
+function angledRadiograph(meet: boolean): Picture {
+	const { valley, streams, meetings } = sceneAt(78, 26, 'stream', meet);
 	const film = pathRound(2);
 	film.rect(46, 28, 66, 90);
 	const source = pathRound(2);
@@ -186,25 +200,25 @@ function angledRadiograph(): Omit<FindingPictureLayout, 'width' | 'height'> {
 	return {
 		shapes: [
 			{ tone: 'film', path: film.toString() },
-			scene.valley,
-			scene.streams,
+			valley,
+			streams,
 			{ tone: 'handle', path: source.toString() },
 			{ tone: 'arrow', path: arrowPath([22, 23], [44, 37], 6) },
 			{ tone: 'arrow', path: arrowPath([20, 28], [42, 60], 6) },
 			{ tone: 'arrow', path: arrowPath([16, 30], [41, 84], 6) }
 		],
-		meetings: [mark(scene.meeting)]
+		meetings
 	};
 }
 
-function cbctReading(): Omit<FindingPictureLayout, 'width' | 'height'> {
-	const scene = sceneAt(38, 32, 'stream');
+function cbctReading(meet: boolean): Picture {
+	const { frame, valley, streams, meetings } = sceneAt(38, 32, 'stream', meet);
 	const levels = [0.84, 0.56, 0.28];
 	const sectionX = 96;
-	const shapes = levels.flatMap((height, i): PictureShape[] => {
-		const y = scene.frame.yOf(height);
+	const sections = levels.flatMap((height, i): PictureShape[] => {
+		const y = frame.yOf(height);
 		const dots = pathRound(2);
-		for (const x of i < 2 ? [-6.5 + i * 1.5, 6.5 - i * 1.5] : [0]) {
+		for (const x of meet && i === 2 ? [0] : [-6.5 + i * 1.5, 6.5 - i * 1.5]) {
 			dots.moveTo(sectionX + x, y);
 			dots.lineTo(sectionX + x + 0.01, y);
 		}
@@ -214,10 +228,10 @@ function cbctReading(): Omit<FindingPictureLayout, 'width' | 'height'> {
 			{ tone: 'stream', path: dots.toString() }
 		];
 	});
-	return { shapes: [scene.valley, scene.streams, ...shapes], meetings: [mark(scene.meeting)] };
+	return { shapes: [valley, streams, ...sections], meetings };
 }
 
-const PICTURES: Record<PicturedFinding, () => Omit<FindingPictureLayout, 'width' | 'height'>> = {
+const PICTURES: Record<PicturedFinding, (meet: boolean) => Picture> = {
 	'cone-mark': coneMark,
 	draw,
 	'file-contact': fileContact,
@@ -227,8 +241,12 @@ const PICTURES: Record<PicturedFinding, () => Omit<FindingPictureLayout, 'width'
 };
 
 /**
- * A small picture of what a positive finding means, in the language of the river chart. Not to scale.
+ * A small picture of what a result of a test means, in the language of the river chart. Not to scale. A positive one shows
+ * canals that meet, a negative one canals that stay apart.
  */
-export function layoutFindingPicture(finding: PicturedFinding): FindingPictureLayout {
-	return { width: WIDTH, height: HEIGHT, ...PICTURES[finding]() };
+export function layoutFindingPicture(
+	finding: PicturedFinding,
+	result: PicturedResult = 'positive'
+): FindingPictureLayout {
+	return { width: WIDTH, height: HEIGHT, ...PICTURES[finding](result === 'positive') };
 }

@@ -37,6 +37,18 @@ describe('layoutForest', () => {
 		expect(rows[0].side ** 2 / rows[1].side ** 2).toBeCloseTo(Math.sqrt(1600 / 100), 2);
 	});
 
+	it('draws squares whose area is the weight, where weights are given', () => {
+		const { rows } = layoutForest({
+			studies: [
+				{ events: 5, total: 10, weight: 0.6 },
+				{ events: 900, total: 1000, weight: 0.3 }
+			],
+			...summaries
+		});
+		expect(rows[0].side).toBe(15);
+		expect(rows[0].side ** 2 / rows[1].side ** 2).toBeCloseTo(2, 2);
+	});
+
 	it('points the diamond at the mean, which need not be in the middle', () => {
 		const { pooled } = layoutForest({ studies: [], ...summaries });
 		expect(pooled).toEqual({ x: 50, from: 40.8, to: 68.4, diamond: '0,50 33.333,0 100,50 33.333,100' });

@@ -5,6 +5,8 @@ import { wilsonInterval } from './wilson';
 export interface ForestStudy {
 	events: number;
 	total: number;
+	/** Share of the information about the middle population, 0..1; without it the square goes by the total. */
+	weight?: number;
 }
 
 /** A pooled or predicted proportion with its 95 % interval. */
@@ -20,7 +22,7 @@ export interface ForestRow {
 	x: number;
 	from: number;
 	to: number;
-	/** Side of the square in pixels: its area grows with the square root of the total. */
+	/** Side of the square in pixels: its area grows with the weight or, without weights, with the square root of the total. */
 	side: number;
 }
 
@@ -49,9 +51,15 @@ const SMALLEST_SIDE_PX = 4;
 const xOf = scaleLinear([0, 1], [EDGE, 100 - EDGE]);
 const round = (value: number) => Math.round(value * 1000) / 1000;
 
-function layoutRow({ events, total }: ForestStudy, largestTotal: number): ForestRow {
+/** Part of the largest square's area that a study's square takes. */
+function areaOf({ total, weight }: ForestStudy): number {
+	return weight ?? Math.sqrt(total);
+}
+
+function layoutRow(study: ForestStudy, largestArea: number): ForestRow {
+	const { events, total } = study;
 	const interval = wilsonInterval(events, total);
-	const side = LARGEST_SIDE_PX * Math.pow(total / largestTotal, 1 / 4);
+	const side = LARGEST_SIDE_PX * Math.sqrt(areaOf(study) / largestArea);
 	return {
 		proportion: events / total,
 		interval,
@@ -79,7 +87,7 @@ export function layoutForest(data: {
 	pooled: ForestSummary;
 	predictive: ForestSummary;
 }): ForestLayout {
-	const largest = Math.max(1, ...data.studies.map((study) => study.total));
+	const largest = data.studies.reduce((most, study) => Math.max(most, areaOf(study)), Number.MIN_VALUE);
 	return {
 		rows: data.studies.map((study) => layoutRow(study, largest)),
 		pooled: layoutSummary(data.pooled),

@@ -40,21 +40,38 @@ export const confluenceRequestSchema = z.strictObject({
 });
 export type ConfluenceRequest = z.infer<typeof confluenceRequestSchema>;
 
-const fateMeans = z.partialRecord(
-	z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']),
-	probabilitySchema
-);
+const fate = z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']);
+const fateMeans = z.partialRecord(fate, probabilitySchema);
+
+const meetSchema = estimateSchema.describe('The canals come together anywhere, whatever they do afterwards');
 
 export const confluenceResponseSchema = z.object({
 	tableRevision: z.number().int(),
-	prior: z.object({ fates: fatesSchema, anotherCanal: estimateSchema.nullable() }),
+	prior: z.object({ fates: fatesSchema, meet: meetSchema, anotherCanal: estimateSchema.nullable() }),
 	posterior: z.object({
 		fates: fatesSchema,
+		meet: meetSchema,
 		anotherCanal: estimateSchema.nullable().describe('Null with three canals: the table cannot say'),
 		exits: z.array(estimateSchema.extend({ count: z.number().int() })),
 		sequences: z.array(estimateSchema.extend({ sequence: z.string() }))
 	}),
-	steps: z.array(z.object({ finding: findingSchema, fates: fateMeans, note: z.string().nullable() })),
+	steps: z.array(
+		z.object({
+			finding: findingSchema,
+			fates: fateMeans,
+			intervals: z.partialRecord(fate, estimateSchema.shape.interval),
+			expected: z
+				.object({
+					meet: probabilitySchema.describe('How often this result is expected where canals meet'),
+					never: probabilitySchema.describe('How often it is expected where they never do'),
+					assumed: z.boolean().describe('True where that was never published'),
+					sources: z.array(z.string())
+				})
+				.nullable()
+				.describe('Null for an unclear result, which says nothing'),
+			note: z.string().nullable()
+		})
+	),
 	next: z.array(
 		z.object({
 			test: z.enum(TESTS),

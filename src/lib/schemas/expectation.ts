@@ -5,20 +5,32 @@ import { featureSchema, studySchema } from './teeth';
 
 const observedSchema = z.object({ min: probabilitySchema, max: probabilitySchema }).nullable();
 
+const fateSchema = z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']);
+const labelsSchema = z.object({
+	vertucci: z.string().nullable(),
+	weine: z.string().nullable(),
+	sertBayirli: z.string().nullable(),
+	ahmed: z.string()
+});
+const seenSchema = z.object({ min: probabilitySchema, max: probabilitySchema, studies: z.number().int() });
+
 /** One canal sequence of a root with its probability in a new population. */
 const sequenceSchema = estimateSchema.extend({
 	sequence: z.string(),
-	labels: z.object({
-		vertucci: z.string().nullable(),
-		weine: z.string().nullable(),
-		sertBayirli: z.string().nullable(),
-		ahmed: z.string()
-	}),
-	fate: z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']),
-	observed: z
-		.object({ min: probabilitySchema, max: probabilitySchema, studies: z.number().int() })
+	labels: labelsSchema,
+	fate: fateSchema,
+	observed: seenSchema
 		.nullable()
 		.describe('Range over the samples that name this sequence; null if none does')
+});
+
+/** A sequence of the samples that has no probability of its own. */
+const rareSequenceSchema = z.object({
+	sequence: z.string(),
+	countedWith: z.string().describe('The sequence whose probability includes it'),
+	labels: labelsSchema,
+	fate: fateSchema,
+	observed: seenSchema
 });
 
 const questionMethodSchema = methodChoiceSchema.extend({
@@ -41,7 +53,16 @@ const questionSchema = z.object({
 	id: z.string(),
 	text: z.string(),
 	borrowed: z.boolean().describe('No sample of this root answers: the figures are the other roots’'),
-	studies: z.array(studySchema),
+	studies: z.array(
+		studySchema.extend({
+			weight: probabilitySchema.describe(
+				'Share of the information the samples give about the middle population'
+			)
+		})
+	),
+	borrowedShare: probabilitySchema.describe(
+		'Share of all the information about the middle population that is lent by other roots'
+	),
 	pooled: summarySchema.describe('The middle population'),
 	predictive: summarySchema.describe('A new population, from which the next patient comes'),
 	tau: tauSchema,
@@ -52,10 +73,7 @@ export type QuestionDto = z.infer<typeof questionSchema>;
 
 const countSchema = estimateSchema.extend({ count: z.number().int() });
 
-export const fatesSchema = z.partialRecord(
-	z.enum(['one-canal', 'shared-exit', 'meet-and-part', 'partly-shared', 'separate']),
-	estimateSchema
-);
+export const fatesSchema = z.partialRecord(fateSchema, estimateSchema);
 
 export const expectationSchema = z.object({
 	tooth: z.string(),
@@ -68,6 +86,7 @@ export const expectationSchema = z.object({
 		sources: z.array(z.string())
 	}),
 	sequences: z.array(sequenceSchema),
+	rareSequences: z.array(rareSequenceSchema).describe('Other sequences that samples of this root name'),
 	orifices: z.array(countSchema),
 	exits: z.array(countSchema),
 	fates: fatesSchema,

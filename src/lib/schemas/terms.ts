@@ -16,6 +16,9 @@ export const METHODS = [
 	'review'
 ] as const;
 
+/** Kinds of things a search finds. */
+export const SEARCH_KINDS = ['tooth', 'root', 'feature', 'source', 'country'] as const;
+
 /** Methods an estimate can be narrowed to: everything but published reviews, which are never pooled. */
 export const POOLED_METHODS = METHODS.filter((method) => method !== 'review');
 
@@ -186,3 +189,17 @@ export const SOURCE_TYPES = [
 ] as const;
 /** Texts a citation can be pasted as. */
 export const PASTED_FORMATS = ['bibtex', 'ris', 'csl'] as const;
+
+/**
+ * Probability of one shared exit from which canals are treated as joined, unless somebody asks for another. High, because shortening
+ * a separate canal leaves it unfilled, the worse mistake (inference, section 4).
+ */
+export const USUAL_THRESHOLD = 0.9;
+/** What screens offer; the API takes up to 0.999. */
+export const THRESHOLD_RANGE = [0.5, 0.99] as const;
+
+/** The nine yes/no questions of a root, as addresses name them. */
+export const QUESTION_NAMES = ['q1', 'q2', 'q3', 'q4', 'q5', 'q6', 'q7', 'q8', 'q9'] as const;
+/** Orders of the samples of a question, as screens offer them. */
+export const STUDY_SORTS = ['share', 'year', 'size', 'weight', 'source', 'country'] as const;
+export type StudySort = (typeof STUDY_SORTS)[number];

@@ -88,9 +88,9 @@ export const confluence = {
 	},
 	cautions: {
 		joiningNotStudied:
-			'Whether canals of this root meet was studied in no sample of the table: that part is borrowed from other roots, so the answer rests on them and on your tests alone. Treat as separate unless you have seen that they join.',
+			'No sample of the table studied whether the canals of this root meet. That part is borrowed from other roots, so the answer rests on those and on your tests. Do not shorten a canal on it alone: first see that the exits are one.',
 		meetAndPartSeen: (share: string) =>
-			`A sample saw canals that meet and part again in up to ${share} of these roots, more than the range above says. Its other classes are not complete, so it is not pooled for this. Make sure that the exits are one before you shorten a canal.`,
+			`A sample saw canals that meet and part again in up to ${share} of these roots, more than the range given here. It does not report every class, so it could not be pooled for this one. See that the exits are one before you shorten a canal.`,
 		one: [
 			'A probability from published samples is not a finding in this patient. Image when in doubt; follow local imaging guidance.'
 		],

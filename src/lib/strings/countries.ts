@@ -57,3 +57,26 @@ export function countriesNamed(beginning: string): string[] {
 
 /** Whether a code is a country's own, ISO 3166-1 alpha-3 or XKX. */
 export const isCountryCode = (code: string): boolean => alpha2.has(code);
+
+/** Languages of dental literature, whose own names of countries people type: `Brasil`, `Deutschland`. */
+const LANGUAGES = ['en', 'es', 'pt', 'fr', 'de', 'it', 'tr', 'nl', 'pl', 'id'];
+/** Names that no list of ISO names has. */
+const EVERYDAY: Record<string, readonly string[]> = {
+	ARE: ['UAE', 'Emirates'],
+	GBR: ['UK', 'England', 'Scotland', 'Wales', 'Great Britain'],
+	KOR: ['Korea'],
+	MMR: ['Burma'],
+	NLD: ['Holland'],
+	TUR: ['Turkey'],
+	USA: ['America', 'United States of America']
+};
+
+/** Names by which people may ask for one country, in several languages, its code among them. */
+export function everyNameOf(code: string): string[] {
+	const two = alpha2.get(code);
+	if (two === undefined) return [code];
+	const inLanguages = LANGUAGES.flatMap(
+		(language) => new Intl.DisplayNames(language, { type: 'region' }).of(two) ?? []
+	);
+	return [...new Set([...inLanguages, ...(EVERYDAY[code] ?? []), code])];
+}

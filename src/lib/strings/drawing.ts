@@ -1,12 +1,7 @@
 import type { Fate } from '$lib/anatomy/sequence';
 import type { LengthStanding } from '$lib/drawing/expectation';
 import type { PicturedFinding } from '$lib/drawing/findingPicture';
-import { count, mm, percent, range } from './format';
-
-/** A figure with its range, once where both read alike. */
-function figure(mean: number, interval: readonly [number, number]): string {
-	return percent(mean) === range(interval) ? percent(mean) : `${percent(mean)} (${range(interval)})`;
-}
+import { count, mm, mmRange, NO_BREAK, type Format } from './format';
 
 /** Interface texts of the drawings. */
 export const drawing = {
@@ -17,10 +12,10 @@ export const drawing = {
 		levelNotPublished: ['level not', 'published'],
 		levelPublished: (levelMm: number, rangeMm?: readonly [number, number]) => [
 			'meet at',
-			rangeMm ? `${rangeMm[0]} to ${mm(rangeMm[1])}` : mm(levelMm)
+			rangeMm ? mmRange(rangeMm) : mm(levelMm)
 		],
-		levelRange: ([from, to]: readonly [number, number], drawnMm: number) =>
-			`The published level of the confluence is a range, ${from} to ${mm(to)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
+		levelRange: (rangeMm: readonly [number, number], drawnMm: number) =>
+			`The published level of the confluence is a range, ${mmRange(rangeMm)} above the apex; it is drawn at its middle, ${mm(drawnMm)}.`,
 		scale: 'Heights are to scale in mm above the root end; widths are not.',
 		length: (lengthMm: number, standing: LengthStanding) =>
 			({
@@ -30,12 +25,16 @@ export const drawing = {
 			})[standing],
 		legend: 'Canal sequences, from orifice to exit',
 		legendHint: 'Choose a sequence to see it alone; choose it again to see all.',
+		alone: (sequence: string) => `Shown alone: ${sequence}.`,
+		showAll: 'Show all sequences',
+		alsoSeen: 'Also named by samples of this root',
+		countedWith: (leaf: string) => `counted with ${leaf}`,
 		strength: 'The stronger a stream is drawn, the more probable it is.',
 		meeting: 'Canals meet here',
 		dashed: 'Dashed: they meet, but no source gives the level',
 		tooRare: 'too rare to draw',
-		probability: (probability: number, interval?: readonly [number, number]) =>
-			interval === undefined ? percent(probability) : figure(probability, interval)
+		probability: (format: Format, probability: number, interval?: readonly [number, number]) =>
+			interval === undefined ? format.percent(probability) : format.figure(probability, interval)
 	},
 	fates: {
 		'one-canal': 'One canal',
@@ -51,14 +50,31 @@ export const drawing = {
 		method: 'Method',
 		counts: 'Of roots',
 		percent: 'Share (95 %)',
-		plot: 'Plot, 0 to 100 %',
+		weight: 'Weight',
+		plot: (format: Format) => `Plot, 0 to 100${NO_BREAK}${format.unit}`,
+		weightLabel: 'weight',
+		marks: {
+			secondary: 'quoted in another source',
+			unverified: 'unverified'
+		},
+		group: (
+			format: Format,
+			name: string,
+			samples: number,
+			observed: readonly [number, number],
+			weight: number | null
+		) =>
+			`${name}: ${count(samples)} ${samples === 1 ? 'sample' : 'samples'}, ${format.range(observed)}${
+				weight === null ? '' : `, weight ${format.percent(weight)}`
+			}`,
 		of: (events: number, total: number) => `${count(events)} of ${count(total)}`,
-		share: (proportion: number, interval: readonly [number, number]) => figure(proportion, interval),
 		pooled: 'Pooled: the middle population',
 		predictive: 'Predicted: a new population',
 		noCountry: 'country not given',
-		intervals:
-			'Square: a study, larger with more roots; line: its 95 % interval (Wilson). Diamond: pooled. Band: where a new population is expected, 95 %.',
+		intervals: (weighed: boolean) =>
+			`Square: a study, larger with ${weighed ? 'more weight' : 'more roots'}; line: its 95 % interval (Wilson). Diamond: pooled. Band: where a new population is expected, 95 %.`,
+		weights:
+			'Weight: the share of the information about the middle population that a sample gives. Where populations differ much, a large sample counts little more than a small one.',
 		empty: 'No study answers this question for this root.'
 	},
 	coverage: {
@@ -69,17 +85,36 @@ export const drawing = {
 			`Dashed line: ${from}. Diamonds: questions under it, or with under 70 % of samples in their 80 % range; they are named below.`
 	},
 	interval: {
-		text: (label: string, mean: number, interval: readonly [number, number]) =>
-			`${label}: ${percent(mean)}, 95 % interval ${range(interval)}`
+		text: (format: Format, label: string, mean: number, interval: readonly [number, number]) =>
+			`${label}: ${format.percent(mean)}, 95 % interval ${format.range(interval)}`
 	},
 	findings: {
-		'cone-mark':
-			'A cone to length in one canal, a file in the other: where the canals meet, the file marks the cone.',
-		draw: 'Irrigant is drawn from one canal and its level falls in the other.',
-		'file-contact': 'Files in both canals touch where the canals meet, and the apex locator shows it.',
-		'two-files':
-			'One file is at full length; the second stops where the canals meet, so its handle stands higher.',
-		'angled-radiograph': 'An angled radiograph on which the canals seem to run together.',
-		'cbct-reading': 'Three sections of a CBCT: two canals, two canals nearer, one canal.'
-	} satisfies Record<PicturedFinding, string>
+		'cone-mark': {
+			positive:
+				'A cone to length in one canal, a file in the other: where the canals meet, the file marks the cone.',
+			negative:
+				'A cone to length in one canal, a file in the other: they do not touch, the cone comes out smooth.'
+		},
+		draw: {
+			positive: 'Irrigant is drawn from one canal and its level falls in the other.',
+			negative: 'Irrigant is drawn from one canal and its level stays in the other.'
+		},
+		'file-contact': {
+			positive: 'Files in both canals touch where the canals meet, and the apex locator shows it.',
+			negative: 'Files at length in both canals do not touch, and the apex locator shows nothing.'
+		},
+		'two-files': {
+			positive:
+				'One file is at full length; the second stops where the canals meet, so its handle stands higher.',
+			negative: 'Both files stand at full length at the same time, their handles level.'
+		},
+		'angled-radiograph': {
+			positive: 'An angled radiograph on which the canals seem to run together.',
+			negative: 'An angled radiograph on which the canals seem to stay apart.'
+		},
+		'cbct-reading': {
+			positive: 'Three sections of a CBCT: two canals, two canals nearer, one canal.',
+			negative: 'Three sections of a CBCT, two canals in each.'
+		}
+	} satisfies Record<PicturedFinding, { positive: string; negative: string }>
 };

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { count, diameter, inWords, mm, mmRange, pValue, percent, range } from './format';
+import { count, diameter, formatFor, inWords, mm, mmRange, pValue, percent, range } from './format';
 
 /** Numbers and units are held together by a no-break space; the checks read better with a plain one. */
 const plain = (text: string) => text.replaceAll('\u00a0', ' ');
@@ -22,6 +22,34 @@ describe('percent', () => {
 		expect(percent(0.63)).toBe('63\u00a0%');
 		expect(range([0.35, 0.88])).toBe('35 to 88\u00a0%');
 		expect(mm(3)).toBe('3\u00a0mm');
+	});
+});
+
+describe('formatFor', () => {
+	it.each([
+		['percent', '63 %', '35 to 88 %', 'under 1 %', '63 % (35 to 88 %)', '50 %'],
+		['in-100', '63 in 100', '35 to 88 in 100', 'under 1 in 100', '63 in 100 (35 to 88 in 100)', '50 in 100']
+	] as const)('writes probabilities as %s', (units, one, many, rare, both, alike) => {
+		const format = formatFor(() => units);
+		expect(plain(format.percent(0.634))).toBe(one);
+		expect(plain(format.range([0.351, 0.88]))).toBe(many);
+		expect(plain(format.percent(0.001))).toBe(rare);
+		expect(plain(format.figure(0.634, [0.351, 0.88]))).toBe(both);
+		expect(plain(format.figure(0.5, [0.498, 0.502]))).toBe(alike);
+	});
+
+	it('follows a choice that changes, and is percent without one', () => {
+		let units: 'percent' | 'in-100' = 'percent';
+		const format = formatFor(() => units);
+		expect(format.unit).toBe('%');
+		units = 'in-100';
+		expect(plain(format.unit)).toBe('in 100');
+		expect(plain(format.percent(0.2))).toBe('20 in 100');
+		expect(plain(formatFor().percent(0.2))).toBe('20 %');
+	});
+
+	it('holds number and words together', () => {
+		expect(formatFor(() => 'in-100').percent(0.2)).toBe('20\u00a0in\u00a0100');
 	});
 });
 

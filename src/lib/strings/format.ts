@@ -5,7 +5,7 @@
 
 const LOCALE = 'en-GB';
 /** A number and its unit stay on one line. */
-const NO_BREAK = '\u00a0';
+export const NO_BREAK = '\u00a0';
 
 const whole = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 0 });
 const tenths = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 1 });
@@ -42,6 +42,44 @@ export function percent(probability: number): string {
 export function range(interval: readonly [number, number]): string {
 	const [lower, upper] = [percentNumber(interval[0]), percentNumber(interval[1])];
 	return lower === upper ? percent(interval[0]) : `${lower} to ${upper}${NO_BREAK}%`;
+}
+
+/** How probabilities and their ranges are written: `63 %` or `63 in 100`. */
+export type Units = 'percent' | 'in-100';
+
+/** Probabilities as a person chose to read them. */
+export interface Format {
+	/** `63 %` or `63 in 100`. @param probability 0..1 */
+	percent: (probability: number) => string;
+	/** `35 to 88 %` or `35 to 88 in 100`. @param interval lower and upper end, 0..1 */
+	range: (interval: readonly [number, number]) => string;
+	/** A figure with its range behind it: `63 % (35 to 88 %)`; once where both read alike. */
+	figure: (probability: number, interval: readonly [number, number]) => string;
+	/** What the numbers along a scale from 0 to 100 are: `%` or `in 100`. */
+	readonly unit: string;
+}
+
+/**
+ * The formatter for the units a person chose.
+ *
+ * @param units asked each time, so that a choice may change under a page; default percent
+ */
+export function formatFor(units: () => Units = () => 'percent'): Format {
+	// "In 100" is the same number with its unit in words; the words hold together as the sign does.
+	const written = (text: string) =>
+		units() === 'percent' ? text : text.replace(`${NO_BREAK}%`, `${NO_BREAK}in${NO_BREAK}100`);
+	const format: Format = {
+		percent: (probability) => written(percent(probability)),
+		range: (interval) => written(range(interval)),
+		figure: (probability, interval) => {
+			const [one, many] = [format.percent(probability), format.range(interval)];
+			return one === many ? one : `${one} (${many})`;
+		},
+		get unit() {
+			return units() === 'percent' ? '%' : `in${NO_BREAK}100`;
+		}
+	};
+	return format;
 }
 
 /**

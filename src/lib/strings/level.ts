@@ -86,6 +86,7 @@ export const level = {
 	} satisfies Record<CutRemark, string>,
 	fillFirst:
 		'Fill the canal with the straighter, wider way to the common end first, its cone to full working length. Shape the shared part through that canal only (common practice).',
+	contradict: 'These measurements contradict each other: measure again before you shorten anything.',
 	disagree: (p: string) =>
 		`These measurements contradict each other (${p}): one number is wrong, or something other than a confluence stops the cone. Measure again before you shorten anything.`,
 	agree: (p: string) => `The measurements agree with each other (${p}).`,

@@ -1,3 +1,4 @@
+import type { StudySort } from '$lib/schemas/terms';
 import { count } from './format';
 
 /** Words of the page of a root. */
@@ -90,8 +91,47 @@ export const root = {
 		apply: 'Narrow',
 		clear: 'Take all samples',
 		active: 'Only some samples are taken: the figures below are for these.',
-		wrong: 'These filters could not be used:'
+		wrong: 'These filters could not be used, so the figures below are for all samples:'
 	},
+	change: {
+		title: 'What the filters changed',
+		figure: 'Figure',
+		all: 'All samples',
+		taken: 'Samples taken',
+		sources: 'Sources',
+		roots: 'Roots, about',
+		samplesOf: (question: string) => `Samples on: ${question}`,
+		nothing: 'No sample of this root is left: every figure on the right is borrowed from other roots.',
+		note: 'In a new population, with its 95 % range. Where fewer samples are left, the ranges widen and other roots count for more.'
+	},
+	order: {
+		title: 'Order of the samples',
+		sorts: {
+			share: 'highest share first',
+			year: 'newest first',
+			size: 'largest first',
+			weight: 'heaviest first',
+			source: 'by source',
+			country: 'by country'
+		} satisfies Record<StudySort, string>,
+		group: 'Methods apart',
+		apply: 'Put in order'
+	},
+	borrowedShare: (share: string) =>
+		`Besides the samples, what other roots lend makes up ${share} of the information about the middle population`,
+	rareTitle: 'Also named by samples',
+	countedWith: (leaf: string) => `counted with ${leaf}`,
+	noOwn: 'none of its own',
+	downloads: {
+		title: 'Take it with you',
+		csv: 'Samples and estimates (CSV)',
+		json: 'The whole answer (JSON)',
+		svg: 'Drawing (SVG)',
+		png: 'Drawing (PNG)',
+		failed: 'The picture could not be made: take the SVG instead.',
+		note: 'Each holds the filters and the revision of the table it was made from.'
+	},
+	compareTitle: 'Compare with',
 	methods: {
 		'micro-ct': 'micro-CT',
 		clearing: 'clearing',

@@ -13,11 +13,10 @@ export const site = {
 		about: 'What this is and is not'
 	},
 	search: {
-		label: 'Look up a tooth, root or feature',
-		placeholder: '16, #14, UL6, upper first molar, mb2',
+		label: 'Look up a tooth, root, feature, source or country',
+		placeholder: '16, #14, UL6, upper first molar, mb2, vertucci 84',
 		placeholderShort: '16, UL6, mb2',
-		button: 'Look up',
-		shortcut: 'Press / to look up'
+		button: 'Look up'
 	},
 	preferences: {
 		title: 'On this device',
@@ -25,6 +24,9 @@ export const site = {
 		themes: { system: 'As the device', light: 'Light', dark: 'Dark' },
 		numbers: 'Tooth numbers',
 		systems: { iso: 'ISO 3950 (16)', universal: 'Universal (3)', palmer: 'Palmer (UR6)' },
+		threshold: 'Treat as joined from',
+		unitsOf: 'Probabilities',
+		units: { percent: 'in % (35 to 88 %)', 'in-100': 'in 100 (35 to 88 in 100)' },
 		save: 'Keep',
 		note: 'Kept in one cookie on this device; no account needed.'
 	},

@@ -1,5 +1,11 @@
 import { mm } from './format';
 
+/** `1 root`, `2 roots`, `2 or more roots` for a category of the evidence files. */
+function counted(category: string, one: string, many: string): string {
+	if (category.endsWith('+')) return `${category.slice(0, -1)} or more ${many}`;
+	return `${category} ${category === '1' ? one : many}`;
+}
+
 /** Words of the page of a tooth. */
 export const tooth = {
 	numbers: 'Numbers',
@@ -8,7 +14,42 @@ export const tooth = {
 	premolarNote:
 		'Before you know how many roots there are, look at the whole tooth. With one root, look at the single root; with two, each root is a root of its own, and nothing joins between them.',
 	moreThanOne: 'More than one canal',
-	meet: 'The canals come together somewhere',
+	severalCanals: (often: string, figure: string) =>
+		`More than one canal: ${often}, ${figure} in other populations.`,
+	fatesOfAll: (fates: string) => `Of all such roots: ${fates}.`,
+	borrowed: 'No sample of this root: the figures are borrowed from other roots.',
+	printBrief: 'Print the one-page brief',
+	briefTitle: (name: string, numbers: string) => `${name} · ${numbers}`,
+	briefFoot: (site: string, revision: number, address: string) =>
+		`${site}, table revision ${revision}. Every sample with its source and place: ${address}`,
+	largest: (samples: string) => `Largest samples: ${samples}.`,
+	lookFor: 'What to look for',
+	lookForNote:
+		'From the figures on this page, the most frequent first; what rests on one or two samples stands last. The range says how far populations differ; it is not a finding in this patient.',
+	lookForEmpty:
+		'No figure of the table points to anything beyond one canal in each root. That is a lack of samples as much as a finding: look.',
+	secondCanal: (root: string, degree: 'expect' | 'look' | 'uncommon') =>
+		`${root}: ${{ expect: 'expect a second canal', look: 'look for a second canal', uncommon: 'a second canal is uncommon' }[degree]}`,
+	withRange: (often: string, range: string) => `${often}; in other populations ${range}`,
+	restsOn: (samples: number) =>
+		samples < 3
+			? `from only ${samples === 1 ? 'one sample' : `${samples} samples`}`
+			: `from ${samples} samples`,
+	noEvidenceShort: 'No evidence:',
+	silentOn: (features: string) =>
+		`no sample of all such teeth reports ${features}. Absence of samples is not absence.`,
+	counts: {
+		roots: (category: string) => counted(category, 'root', 'roots'),
+		canals: (category: string) => counted(category, 'canal', 'canals')
+	},
+	middleSample: (middle: string, range: string, samples: number) =>
+		samples === 1
+			? `${middle}, one sample`
+			: `${middle} in the middle sample; ${range} over ${samples} samples`,
+	countBrief: (name: string, middle: string, range: string, samples: number) =>
+		samples === 1 ? `${name} ${middle} (one sample)` : `${name} ${middle} (${range}, ${samples} samples)`,
+	stripNote: (unit: string) =>
+		`From 0 to 100 ${unit} of teeth. Each dot is a sample, larger with more teeth; the upright line is the middle sample.`,
 	noEvidence:
 		'No evidence: no sample of this root answers any question. The figures shown are borrowed from other roots.',
 	openRoot: 'What to expect, and why',
@@ -16,15 +57,15 @@ export const tooth = {
 	inOthers: (range: string) => `in other populations ${range}`,
 	rootCounts: 'Number of roots',
 	canalCounts: 'Number of canals in the tooth',
-	countsNote: 'Samples of all such teeth, largest first. Shown as counted, not pooled.',
+	countsNote: 'Samples of all such teeth, shown as counted, not pooled.',
+	countsTable: (count: number) => `The ${count === 1 ? 'sample' : `${count} samples`}, with source and place`,
 	countsEmpty: 'No sample of all such teeth is in the table.',
 	sample: 'Sample',
 	place: 'Place',
 	teeth: 'Teeth',
 	counted: 'Counted',
 	countOf: (category: string, share: string) => `${category}: ${share}`,
-	showAll: (count: number) => `Show all ${count} samples`,
-	features: 'What else to look for',
+	features: 'Features, with their samples',
 	featuresNote:
 		'How often a feature is there: the range in which a new population is expected (95 %), from the samples named.',
 	featuresEmpty: 'No sample of all such teeth reports a feature.',

@@ -1,16 +1,16 @@
 import { error, redirect, type RequestHandler } from '@sveltejs/kit';
-import { preferencesSchema } from '$lib/schemas/preferences';
+import { changedPreferences } from '$lib/schemas/preferences';
 import { PREFERENCES_COOKIE } from '$lib/server/hooks/preferences';
 import { ownAddress } from '$lib/server/ownAddress';
 
 const KEPT_SECONDS = 365 * 24 * 60 * 60;
 
 /** Keeps a visitor's preferences in a cookie and goes back to the page they came from. */
-export const POST: RequestHandler = async ({ request, cookies, url }) => {
+export const POST: RequestHandler = async ({ request, cookies, url, locals }) => {
 	const form = await request.formData().catch(() => error(400, 'This is not the form of the preferences.'));
-	const chosen = preferencesSchema.safeParse({ theme: form.get('theme'), numbers: form.get('numbers') });
-	if (chosen.success) {
-		cookies.set(PREFERENCES_COOKIE, JSON.stringify(chosen.data), {
+	const chosen = changedPreferences(locals.preferences, form);
+	if (chosen) {
+		cookies.set(PREFERENCES_COOKIE, JSON.stringify(chosen), {
 			path: '/',
 			maxAge: KEPT_SECONDS,
 			httpOnly: true,

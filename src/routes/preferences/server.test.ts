@@ -1,3 +1,4 @@
+import { readPreferences, type Preferences } from '$lib/schemas/preferences';
 import { PREFERENCES_COOKIE } from '$lib/server/hooks/preferences';
 import { isHttpError, isRedirect, type Cookies } from '@sveltejs/kit';
 import { describe, expect, it } from 'vitest';
@@ -7,12 +8,14 @@ import { POST } from './+server';
 const ORIGIN = 'https://canals.example.org';
 
 /** Where a sent form leads, and the cookies it sets. */
-async function send(fields: Record<string, string>) {
+async function send(fields: Record<string, string>, before: Preferences = readPreferences({})) {
 	const kept: Record<string, string> = {};
 	const cookies = { set: (name: string, value: string) => (kept[name] = value) } as unknown as Cookies;
 	const request = new Request(`${ORIGIN}/preferences`, { method: 'POST', body: new URLSearchParams(fields) });
 	try {
-		await POST(requestEvent(request, { cookies }));
+		await POST(
+			requestEvent(request, { cookies, locals: { requestId: '', preferences: before, user: null } })
+		);
 	} catch (thrown) {
 		if (!isRedirect(thrown)) throw thrown;
 		return { status: thrown.status, location: thrown.location, kept };
@@ -23,9 +26,28 @@ async function send(fields: Record<string, string>) {
 describe('the preferences form', () => {
 	it('keeps the choice and leads back to the page it came from', async () => {
 		const back = '/teeth/maxillary-first-molar/MB?method=cbct';
-		const sent = await send({ theme: 'dark', numbers: 'universal', back });
+		const sent = await send({ theme: 'dark', numbers: 'universal', units: 'in-100', back });
 		expect(sent).toMatchObject({ status: 303, location: back });
-		expect(JSON.parse(sent.kept[PREFERENCES_COOKIE])).toEqual({ theme: 'dark', numbers: 'universal' });
+		expect(JSON.parse(sent.kept[PREFERENCES_COOKIE])).toEqual({
+			theme: 'dark',
+			numbers: 'universal',
+			threshold: 0.9,
+			units: 'in-100'
+		});
+	});
+
+	it('keeps the decision line as a number, and what the form does not name as it was', async () => {
+		const { kept } = await send(
+			{ threshold: '0.95' },
+			{ theme: 'dark', numbers: 'palmer', threshold: 0.8, units: 'in-100' }
+		);
+		expect(JSON.parse(kept[PREFERENCES_COOKIE])).toEqual({
+			theme: 'dark',
+			numbers: 'palmer',
+			threshold: 0.95,
+			units: 'in-100'
+		});
+		for (const threshold of ['0.4', '1', '', 'high']) expect((await send({ threshold })).kept).toEqual({});
 	});
 
 	it('keeps nothing of a choice that is none', async () => {

@@ -1,4 +1,4 @@
-import { test as base, expect, type Page } from '@playwright/test';
+import { test as base, expect, type Locator, type Page } from '@playwright/test';
 
 export { expect };
 
@@ -36,4 +36,14 @@ export const test = base.extend<Watch & { watched: void }>({
 /** Goes to a page and waits until its scripts have run, so that keys and clicks meet the enhanced controls. */
 export async function open(page: Page, address: string) {
 	await page.goto(address, { waitUntil: 'networkidle' });
+}
+
+/** Presses Tab until an element has the focus, as somebody without a mouse would. */
+export async function tabTo(page: Page, target: Locator) {
+	await expect(target).toBeVisible();
+	for (let presses = 0; presses < 250; presses++) {
+		if (await target.evaluate((one) => one === document.activeElement)) return;
+		await page.keyboard.press('Tab');
+	}
+	throw new Error('The element was not reached with the Tab key.');
 }

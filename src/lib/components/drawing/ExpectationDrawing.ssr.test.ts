@@ -47,6 +47,43 @@ describe('ExpectationDrawing without JavaScript', () => {
 		expect(buttons.every((button) => button.includes('aria-pressed="false"'))).toBe(true);
 	});
 
+	it('has a link for each sequence where the page can show it alone, and one back to all', () => {
+		const address = (sequence: string | null) => (sequence === null ? '/here' : `/here?show=${sequence}`);
+		const alone = html({ show: '2-1', showAddress: address });
+		expect(alone).not.toContain('<button');
+		const links = [...alone.matchAll(/<a [^>]*href="([^"]*)"[^>]*>/g)].map(([tag, href]) => [
+			href,
+			tag.includes('aria-current="true"')
+		]);
+		expect(links).toEqual([
+			['/here?show=1', false],
+			['/here', true],
+			['/here?show=2-1-2', false],
+			['/here?show=3', false],
+			['/here', false]
+		]);
+		// 2-1 in full, the others faded, and the text alternative says so.
+		const opacities = [...alone.matchAll(/stroke-opacity="([\d.]+)" stroke-width="7"/g)].map(
+			([, value]) => value
+		);
+		expect(opacities).toEqual(['0.04', '1', '0.04', '0.004']);
+		expect(alone).toContain('Shown alone: 2-1.</desc>');
+	});
+
+	it('draws a sequence that samples only name when it is shown alone, and not before', () => {
+		const seen = { ...data, alsoSeen: [{ sequence: '1-3-2', joinLevelMm: null }] };
+		const address = (sequence: string | null) => `/here?show=${sequence ?? ''}`;
+		const opacity = (page: string) =>
+			[...page.matchAll(/stroke-opacity="([\d.]+)" stroke-width="7"/g)].at(-1)?.[1];
+		expect(opacity(html({ data: seen }))).toBe('0');
+		expect(html({ data: seen })).toContain('counted with 1-2');
+		expect(opacity(html({ data: seen, show: '1-3-2', showAddress: address }))).toBe('1');
+	});
+
+	it('shows all when the sequence asked for is not one of the root', () => {
+		expect(html({ show: '4-1' })).toContain('stroke-opacity="0.412"');
+	});
+
 	it('says what is published and what is not', () => {
 		expect(html()).toContain('3.7 mm');
 		expect(html()).toContain('level not');

@@ -6,15 +6,16 @@ import FindingPicture from './FindingPicture.svelte';
 import SequenceGlyph from './SequenceGlyph.svelte';
 
 describe('FindingPicture', () => {
-	it.each(TESTS)('draws %s with a text alternative', (finding) => {
-		const { body } = render(FindingPicture, { props: { finding } });
-		expect(body).toContain(`role="img" aria-label="${drawing.findings[finding]}"`);
-		expect(body).not.toMatch(/ style=|undefined|NaN/);
-	});
-
-	it('takes the words of its page', () => {
-		const { body } = render(FindingPicture, { props: { finding: 'draw', label: 'Draw test, positive' } });
-		expect(body).toContain('aria-label="Draw test, positive"');
+	it.each(TESTS)('draws both results of %s, each with a text alternative', (finding) => {
+		const [positive, negative] = (['positive', 'negative'] as const).map((result) => {
+			const { body } = render(FindingPicture, { props: { finding, result } });
+			expect(body).toContain(`role="img" aria-label="${drawing.findings[finding][result]}"`);
+			expect(body).not.toMatch(/ style=|undefined|NaN/);
+			return body;
+		});
+		// The sign of a confluence stands where canals meet and nowhere else.
+		expect(positive).toContain('stroke-coral');
+		expect(negative).not.toContain('stroke-coral');
 	});
 });
 

@@ -10,7 +10,8 @@ const study = {
 	country: 'USA',
 	method: 'sectioning',
 	events: 81,
-	total: 263
+	total: 263,
+	year: 1969
 };
 const props = {
 	caption: 'More than one canal?',
@@ -52,6 +53,19 @@ describe('ForestPlot', () => {
 		const roles = ['table', 'rowgroup', 'row', 'columnheader', 'rowheader', 'cell'];
 		for (const role of roles) expect(html()).toContain(`role="${role}"`);
 		expect(html()).toContain('More than one canal?</caption>');
+	});
+
+	it('gives weights, marks what was only quoted, and puts methods together on request', () => {
+		const two = [
+			{ ...study, weight: 0.75, mark: 'secondary' as const },
+			{ ...study, id: 8, method: 'CBCT', weight: 0.25, events: 100, total: 200 }
+		];
+		const plot = html({ studies: two, grouped: true });
+		expect(plot).toContain('>Weight</th>');
+		expect(plot.replace(/<[^>]*>/g, ' ')).toMatch(/Weine and others 1969\s+\? quoted in another source/);
+		const names = [...plot.matchAll(/scope="rowgroup"[^>]*>([^<]*)</g)].map(([, name]) => name.trim());
+		expect(names).toEqual(['sectioning: 1 sample, 31 %, weight 75 %', 'CBCT: 1 sample, 50 %, weight 25 %']);
+		expect(html()).not.toContain('>Weight</th>');
 	});
 
 	it('says where no country is given and where there is no study', () => {

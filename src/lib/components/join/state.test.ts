@@ -2,7 +2,7 @@ import { FILTER_FIELDS, TESTS } from '$lib/schemas/terms';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { LevelState } from './levelState';
-import { readState, withFinding, writeState, type JoinState } from './state';
+import { isFormAddress, readState, withAction, withFinding, writeState, type JoinState } from './state';
 
 const query = (text: string) => readState(new URLSearchParams(text));
 
@@ -136,5 +136,65 @@ describe('withFinding', () => {
 		withFinding(state, 'draw', 'positive');
 		withFinding(state, 'two-files', 'positive');
 		expect(state).toEqual(before);
+	});
+});
+
+describe('withAction', () => {
+	const state = query('canals=3&draw=negative&draw-pair=MB-ML&cone-mark=positive&file-contact=unclear');
+	const after = (action: string) =>
+		withAction(state, action).findings.map(({ test, result }) => `${test}=${result}`);
+	const [draw, mark, contact] = ['draw=negative', 'cone-mark=positive', 'file-contact=unclear'];
+
+	it('moves a finding by one place', () => {
+		expect(after('up:cone-mark')).toEqual([mark, draw, contact]);
+		expect(after('down:cone-mark')).toEqual([draw, contact, mark]);
+		expect(withAction(withAction(state, 'up:cone-mark'), 'down:cone-mark')).toEqual(state);
+	});
+
+	it('moves nothing beyond the ends, and nothing that was not found', () => {
+		for (const action of ['up:draw', 'down:file-contact', 'up:two-files', 'remove:two-files'])
+			expect(withAction(state, action)).toEqual(state);
+	});
+
+	it('takes a finding out, and enters one', () => {
+		expect(after('remove:draw')).toEqual([mark, contact]);
+		expect(after('positive:two-files')).toEqual([draw, mark, contact, 'two-files=positive']);
+	});
+
+	it('makes an unclear finding anew in its place, its pair kept', () => {
+		expect(after('positive:file-contact')).toEqual([draw, mark, 'file-contact=positive']);
+		expect(withAction(state, 'positive:draw').findings[0].pair).toBe('MB-ML');
+	});
+
+	it.each(['', 'up', 'up:', ':draw', 'perhaps:draw', 'up:dowsing', 'remove:__proto__', 'up:draw:x:'])(
+		'does nothing for "%s"',
+		(action) => {
+			expect(withAction(state, action)).toEqual(state);
+		}
+	);
+});
+
+describe('what a form without JavaScript sends', () => {
+	it('comes in the order of its fields and keeps that of the account, a new finding last', () => {
+		const sent = query('canals=2&order=two-files%2Cdraw&cone-mark=positive&draw=negative&two-files=positive');
+		expect(writeState(sent)).toBe('canals=2&two-files=positive&draw=negative&cone-mark=positive');
+	});
+
+	it('does what its button says, with choices not sent before', () => {
+		const sent = query('canals=2&order=draw&do=up:cone-mark&cone-mark=positive&draw=negative');
+		expect(writeState(sent)).toBe('canals=2&cone-mark=positive&draw=negative');
+	});
+
+	it('gives the line in percent; an address gives it as a probability, which wins', () => {
+		expect(query('canals=2&line=95').threshold).toBe(0.95);
+		expect(query('canals=2&line=').threshold).toBeUndefined();
+		expect(query('canals=2&line=95&threshold=0.8').threshold).toBe(0.8);
+		expect(query('canals=2&line=much').threshold).toBeNaN();
+	});
+
+	it('is told from an address as the page writes it', () => {
+		for (const sent of ['order=', 'canals=2&line=', 'canals=2&do=up:draw'])
+			expect(isFormAddress(new URLSearchParams(sent))).toBe(true);
+		expect(isFormAddress(new URLSearchParams(writeState(query('canals=2&line=95&order=draw'))))).toBe(false);
 	});
 });

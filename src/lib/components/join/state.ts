@@ -1,5 +1,6 @@
-import { TESTS, type RESULTS } from '$lib/schemas/terms';
+import { RESULTS, TESTS } from '$lib/schemas/terms';
 import { readFilterFields, type FilterFields } from '$lib/filterQuery';
+import { confluence as words } from '$lib/strings/confluence';
 import { levelFields, readLevel, type LevelState } from './levelState';
 
 /** The question of the page as its address writes it. Values are as typed: the schema says what is wrong with them. */
@@ -11,7 +12,7 @@ export interface JoinState {
 	rootsSeen?: string;
 	search?: string;
 	threshold?: number;
-	/** In the order of the address, which is the order they were made in. */
+	/** In the order they were made in: that of the address, or of the `order` that a form without JavaScript sends. */
 	findings: { test: string; result: string; pair?: string }[];
 	/** What was typed of the level of the confluence. */
 	level: LevelState;
@@ -19,15 +20,44 @@ export interface JoinState {
 	filters: FilterFields;
 }
 
+/** The probability from which canals are treated as joined, and where it comes from. */
+export interface DecisionLine {
+	value: number;
+	from: 'address' | 'device' | 'usual';
+}
+/** The line that holds while the address gives none. */
+export type UnsetLine = DecisionLine & { from: 'device' | 'usual' };
+
 type Test = (typeof TESTS)[number];
+type Result = (typeof RESULTS)[number];
+
+/** A finding in words, such as "Cone mark: positive (MB-ML)". */
+export function findingName({ test, result, pair }: { test: Test; result: Result; pair?: string }): string {
+	return `${words.tests[test].name}: ${words.results[result].toLowerCase()}${pair ? ` (${pair})` : ''}`;
+}
+
+/** Id of the form of the findings; buttons elsewhere on the page belong to it by this. */
+export const JOIN_FORM = 'join-form';
+
+/** Names that only a form without JavaScript sends: the order of its findings, the line in percent, a button pressed. */
+const FORM_FIELDS = ['order', 'line', 'do'] as const;
 
 const isTest = (name: string): name is Test => (TESTS as readonly string[]).includes(name);
 
 /**
  * Reads the state of the estimator's page from its address: `?canals=2&search=microscope&cone-mark=positive`.
- * Blank fields, which a form without JavaScript sends too, are as if absent.
+ * Blank fields, which a form without JavaScript sends too, are as if absent; a button that it was sent with (`do=up:draw`) is done.
  */
 export function readState(query: URLSearchParams): JoinState {
+	return withAction(readFields(query), query.get('do') ?? '');
+}
+
+/** Whether an address is one that a form without JavaScript made, which `writeState` writes shorter. */
+export function isFormAddress(query: URLSearchParams): boolean {
+	return FORM_FIELDS.some((name) => query.has(name));
+}
+
+function readFields(query: URLSearchParams): JoinState {
 	const text = (name: string) => query.get(name)?.trim() || undefined;
 	const number = (name: string) => (text(name) === undefined ? undefined : Number(text(name)));
 	const findings: JoinState['findings'] = [];
@@ -36,6 +66,10 @@ export function readState(query: URLSearchParams): JoinState {
 		const pair = text(`${name}-pair`);
 		findings.push({ test: name, result: value, ...(pair && { pair }) });
 	}
+	const order = text('order')?.split(',') ?? [];
+	const placeOf = ({ test }: { test: string }) => (order.includes(test) ? order.indexOf(test) : order.length);
+	findings.sort((a, b) => placeOf(a) - placeOf(b));
+	const line = number('line');
 	const state: JoinState = {
 		asked: text('canals') !== undefined,
 		findings,
@@ -47,7 +81,7 @@ export function readState(query: URLSearchParams): JoinState {
 		orifices: number('orifices'),
 		rootsSeen: text('rootsSeen'),
 		search: text('search'),
-		threshold: number('threshold')
+		threshold: number('threshold') ?? (line === undefined ? undefined : line / 100)
 	};
 	return Object.assign(
 		state,
@@ -92,4 +126,28 @@ export function withFinding(
 			? state.findings
 			: [...state.findings, finding];
 	return { ...state, findings };
+}
+
+/** The state with one finding a place earlier or later in the account; the same where there is no such place. */
+function withMoved(state: JoinState, test: Test, by: -1 | 1): JoinState {
+	const from = state.findings.findIndex((one) => one.test === test);
+	const to = from + by;
+	if (from < 0 || to < 0 || to >= state.findings.length) return state;
+	const findings = [...state.findings];
+	[findings[from], findings[to]] = [findings[to], findings[from]];
+	return { ...state, findings };
+}
+
+/** What a button of the page does: `up:draw`, `down:draw`, `remove:draw`, or a result to enter, `positive:draw`. */
+export type JoinAction = `${'up' | 'down' | 'remove' | Result}:${Test}`;
+
+/** The state after a button was pressed; the same for anything that is none of its actions. */
+export function withAction(state: JoinState, action: string): JoinState {
+	const [what, test] = action.split(':');
+	if (!isTest(test)) return state;
+	if (what === 'up' || what === 'down') return withMoved(state, test, what === 'up' ? -1 : 1);
+	if (what === 'remove') return withFinding(state, test, '');
+	const result = RESULTS.find((one) => one === what);
+	const pair = state.findings.find((one) => one.test === test)?.pair;
+	return result ? withFinding(state, test, result, pair) : state;
 }

@@ -1,6 +1,6 @@
-import { leafFacts, LEAVES, type Leaf } from '$lib/anatomy/sequence';
+import { describeSequence } from '$lib/anatomy/sequence';
 import type { ExpectationData } from '$lib/drawing/expectation';
-import { percent, range } from '$lib/strings/format';
+import { formatFor } from '$lib/strings/format';
 import { root as words } from '$lib/strings/root';
 
 /** A length or level with its standing, as the drawing needs it. */
@@ -24,19 +24,21 @@ export interface RootShape {
  */
 export function toExpectationData(
 	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[],
-	shape: RootShape
+	shape: RootShape,
+	rare: readonly { sequence: string }[] = []
 ): ExpectationData {
-	const isLeaf = (sequence: string): sequence is Leaf => (LEAVES as readonly string[]).includes(sequence);
+	const levelOf = (sequence: string) =>
+		describeSequence(sequence).fate === 'shared-exit' && shape.confluence ? shape.confluence.mm : null;
 	return {
 		sequences: sequences.map(({ sequence, mean, interval }) => ({
 			sequence,
 			probability: mean,
 			interval,
-			joinLevelMm:
-				isLeaf(sequence) && leafFacts(sequence).fate === 'shared-exit' && shape.confluence
-					? shape.confluence.mm
-					: null
+			joinLevelMm: levelOf(sequence)
 		})),
+		...(rare.length > 0 && {
+			alsoSeen: rare.map(({ sequence }) => ({ sequence, joinLevelMm: levelOf(sequence) }))
+		}),
 		rootLengthMm: shape.length.mm,
 		lengthStanding:
 			shape.length.source === null ? 'assumed' : shape.length.verified ? 'published' : 'unverified',
@@ -45,12 +47,15 @@ export function toExpectationData(
 }
 
 /** What the drawing says, in words: the commonest sequences with their ranges. */
-export function describeExpectation(expectation: {
-	sequences: readonly { sequence: string; mean: number; interval: [number, number] }[];
-}): string {
+export function describeExpectation(
+	expectation: { sequences: readonly { sequence: string; mean: number; interval: [number, number] }[] },
+	format = formatFor()
+): string {
 	const likely = [...expectation.sequences]
 		.sort((a, b) => b.mean - a.mean)
 		.slice(0, 3)
-		.map(({ sequence, mean, interval }) => `${sequence}: ${percent(mean)} (${range(interval)})`);
+		.map(
+			({ sequence, mean, interval }) => `${sequence}: ${format.percent(mean)} (${format.range(interval)})`
+		);
 	return words.drawingText(likely.join('; '));
 }

@@ -31,7 +31,9 @@ describe('the filters of the table', () => {
 
 	it('say at the field what is wrong, and keep what was given', () => {
 		const body = show([['tooth', '16']], [{ path: 'tooth', message: 'The table knows no tooth "16".' }]);
-		expect(body).toMatch(/<select name="tooth"[^>]*aria-invalid="true"[^>]*aria-describedby="tooth-error"/);
+		expect(body).toMatch(
+			/<select id="filter-tooth" name="tooth"[^>]*aria-invalid="true"[^>]*aria-describedby="tooth-error"/
+		);
 		expect(body).toMatch(/id="tooth-error"[^>]*>The table knows no tooth "16"\./);
 		expect(body).toMatch(/<option value="16" selected/);
 		expect(body).toContain('role="alert"');

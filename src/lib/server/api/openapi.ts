@@ -96,9 +96,10 @@ export function describeOperations() {
 }
 
 function exampleAddress(operation: Operation): string {
-	return operation.path.replace(/\{(\w+)\}/g, (_, name: string) =>
+	const path = operation.path.replace(/\{(\w+)\}/g, (_, name: string) =>
 		encodeURIComponent(exampleOf(operation, name))
 	);
+	return path + (operation.exampleQuery ?? '');
 }
 
 /** A value of the path that works on the shipped table. */

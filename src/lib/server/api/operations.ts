@@ -13,6 +13,7 @@ import {
 	peopleSchema
 } from '$lib/schemas/people';
 import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
+import { searchQuerySchema, searchSchema } from '$lib/schemas/search';
 import {
 	bibliographyQuerySchema,
 	entriesQuerySchema,
@@ -44,6 +45,8 @@ export interface Operation {
 	response?: z.ZodType;
 	/** Media types of text that the answer may come in. */
 	formats?: string[];
+	/** Query of the example, where the operation says little without one. */
+	exampleQuery?: string;
 	/** Statuses other than 200 that the operation may answer with, besides 429 and those of its access. */
 	failures: number[];
 	/**
@@ -178,6 +181,16 @@ export const operations: Operation[] = [
 		summary: 'The same as JSON, with revision, date and licence note',
 		query: tableQuerySchema,
 		response: wholeTableSchema,
+		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/search',
+		id: 'search',
+		summary: 'Teeth, roots, features, sources and countries that a typed phrase may mean',
+		query: searchQuerySchema,
+		exampleQuery: '?q=mb2',
+		response: searchSchema,
 		failures: [422]
 	},
 	{

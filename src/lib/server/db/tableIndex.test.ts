@@ -117,7 +117,7 @@ describe('the index of the table', () => {
 				...Source.build().get({ plain: true }),
 				id: `sorted-${index}`,
 				csl: JSON.stringify({ id: 'x', author: family ? [{ family }] : [] }),
-				title: 'Mill streams',
+				title: '[“Mill streams”, title not seen]',
 				type: 'book',
 				citable: true,
 				authorsKnown: true,

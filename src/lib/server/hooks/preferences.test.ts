@@ -22,8 +22,8 @@ async function visit(cookie: string | undefined) {
 
 describe('preferences', () => {
 	it('are those of the cookie, and the theme stands in the page itself', async () => {
-		expect(await visit('{"theme":"dark","numbers":"palmer"}')).toEqual({
-			preferences: { theme: 'dark', numbers: 'palmer' },
+		expect(await visit('{"theme":"dark","numbers":"palmer","threshold":0.95}')).toEqual({
+			preferences: { theme: 'dark', numbers: 'palmer', threshold: 0.95 },
 			tag: '<html lang="en" data-theme="dark">'
 		});
 	});
@@ -39,7 +39,7 @@ describe('preferences', () => {
 		['an object for a theme', '{"theme":{"a":1},"numbers":[]}']
 	])('are the usual ones with %s', async (_, cookie) => {
 		expect(await visit(cookie)).toEqual({
-			preferences: { theme: 'system', numbers: 'iso' },
+			preferences: { theme: 'system', numbers: 'iso', threshold: 0.9 },
 			tag: '<html lang="en" data-theme="system">'
 		});
 	});
@@ -47,7 +47,18 @@ describe('preferences', () => {
 	it('keep what is set where the rest is not', async () => {
 		expect((await visit('{"theme":"light","other":1}')).preferences).toEqual({
 			theme: 'light',
-			numbers: 'iso'
+			numbers: 'iso',
+			threshold: 0.9
 		});
+	});
+
+	it.each([
+		['{"theme":"neon","numbers":"palmer","threshold":0.8}', { theme: 'system' }],
+		['{"theme":"dark","numbers":7,"threshold":0.8}', { theme: 'dark', numbers: 'iso' }],
+		['{"theme":"dark","numbers":"palmer","threshold":2}', { theme: 'dark', threshold: 0.9 }],
+		['{"theme":"dark","numbers":"palmer","threshold":"a half"}', { theme: 'dark', threshold: 0.9 }],
+		['{"theme":"dark","numbers":"palmer","threshold":null}', { theme: 'dark', threshold: 0.9 }]
+	])('lose a spoilt field alone: %s', async (cookie, changes) => {
+		expect((await visit(cookie)).preferences).toEqual({ numbers: 'palmer', threshold: 0.8, ...changes });
 	});
 });

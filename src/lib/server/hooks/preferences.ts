@@ -1,12 +1,12 @@
 import type { Handle } from '@sveltejs/kit';
-import { preferencesSchema, type Preferences } from '$lib/schemas/preferences';
+import { readPreferences, type Preferences } from '$lib/schemas/preferences';
 
 /** Name of the cookie that keeps a visitor's preferences on the device. */
 export const PREFERENCES_COOKIE = 'preferences';
 
 /** Reads the preferences cookie and writes the chosen theme into the page's first tag, so that no page flashes. */
 export const preferences: Handle = async ({ event, resolve }) => {
-	event.locals.preferences = readPreferences(event.cookies.get(PREFERENCES_COOKIE));
+	event.locals.preferences = preferencesOf(event.cookies.get(PREFERENCES_COOKIE));
 	const { theme } = event.locals.preferences;
 	return resolve(event, {
 		transformPageChunk: ({ html }) => html.replace('%watersmeet.theme%', theme)
@@ -14,13 +14,11 @@ export const preferences: Handle = async ({ event, resolve }) => {
 };
 
 /** Preferences from a cookie's text; whatever cannot be read counts as unset. */
-function readPreferences(text: string | undefined): Preferences {
-	let value: unknown = {};
+function preferencesOf(text: string | undefined): Preferences {
 	try {
-		value = JSON.parse(text ?? '{}');
+		return readPreferences(JSON.parse(text ?? '{}'));
 	} catch {
 		// A cookie that somebody has spoilt is no reason to fail.
+		return readPreferences({});
 	}
-	const result = preferencesSchema.safeParse(value);
-	return result.success ? result.data : preferencesSchema.parse({});
 }

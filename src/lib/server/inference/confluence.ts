@@ -10,7 +10,7 @@ import { combine, isthmusOf, likelihoodsOf, searchOf } from './likelihoods';
 import type { Evidence, FindingLikelihood, Superseded } from './likelihoods';
 import { decide, rankNext } from './next';
 import type { Decision, NextTest } from './next';
-import { exactWeights, expectedLeaves, fateShares, fatesOf } from './posterior';
+import { exactWeights, expectedLeaves, fatesOf } from './posterior';
 import type { FateProbabilities } from './posterior';
 import type { RootModel } from './types';
 
@@ -18,6 +18,8 @@ import type { RootModel } from './types';
 export interface ConfluenceOutlook {
 	/** 'one-canal' only where a width of 1 is possible. */
 	fates: Partial<Record<Fate, Estimate>>;
+	/** The canals come together anywhere, whatever they do afterwards. */
+	meet: Estimate;
 	/** More canals than were negotiated; null for three, where the table cannot say whether a fourth is there. */
 	anotherCanal: Estimate | null;
 }
@@ -30,13 +32,23 @@ interface ConfluencePicture extends ConfluenceOutlook {
 	sequences: ({ sequence: Leaf } & Estimate)[];
 }
 
+/** One finding of the account. */
+interface Step {
+	finding: Finding;
+	/** Fates after this finding and those before it. */
+	fates: FateProbabilities;
+	intervals: Partial<Record<Fate, [number, number]>>;
+	/** How often this result is expected, and what that rests on; null for an unclear one, which says nothing. */
+	expected: { meet: number; never: number; assumed: boolean; sources: string[] } | null;
+}
+
 /** The answer to a question about one root. */
 export interface ConfluenceAnswer {
 	/** The same question (canals, orifices, search) without its findings. */
 	prior: ConfluenceOutlook;
 	posterior: ConfluencePicture;
-	/** Fates after each finding, in the order given. */
-	steps: { finding: Finding; fates: FateProbabilities }[];
+	/** The account: what each finding left, in the order given. */
+	steps: Step[];
 	/** The one of file contact and two files that did not count, since the other says more of the same mechanism. */
 	superseded: Superseded | null;
 	/** Findings (and 'isthmus', and the search) used whose characteristics are assumed, not published. */
@@ -49,6 +61,7 @@ function outlookOf(leaves: Leaf[], question: ConfluenceQuestion, estimate: Estim
 	const fates = fatesOf(leaves).map((fate) => [fate, estimate((leaf) => leafFacts(leaf).fate === fate)]);
 	return {
 		fates: Object.fromEntries(fates) as ConfluenceOutlook['fates'],
+		meet: estimate((leaf) => leafFacts(leaf).stepsDown),
 		anotherCanal:
 			question.canals < MOST_CANALS ? estimate((leaf) => leafFacts(leaf).width > question.canals) : null
 	};
@@ -62,6 +75,14 @@ function pictureOf(inquiry: Inquiry, estimate: Estimator): ConfluencePicture {
 		exits: counts.map((count) => ({ count, ...estimate((leaf) => leafFacts(leaf).exits === count) })),
 		sequences: leaves.map((sequence) => ({ sequence, ...estimate((leaf) => leaf === sequence) }))
 	};
+}
+
+/** What a result is expected to show where canals meet and where they never do. */
+function expectedOf(likelihood: FindingLikelihood | null): Step['expected'] {
+	if (!likelihood) return null;
+	const { meet, never, neverIsthmus, expected, assumed } = likelihood;
+	const sources = [meet, never, neverIsthmus].flatMap((beta) => beta?.sourceIds ?? []);
+	return { ...expected, assumed, sources: [...new Set(sources)] };
 }
 
 /** What of the evidence rests on assumed characteristics. */
@@ -78,19 +99,24 @@ function contextOf(characteristics: Characteristics, question: ConfluenceQuestio
 }
 
 /**
- * The outlook of a question without its findings: the same for every set of findings in the same root, so that the
- * server works it out once while findings are entered one after the other.
+ * What becomes of the canals under a question's findings, without the rest of an answer. The server keeps it: findings
+ * are entered one after the other, and each answer shows the way from no finding to the last.
  * @param model the root under the person's filters
- * @param question only its canals, orifices and search count
+ * @param question one that validateQuestion found nothing wrong with
  * @throws RangeError as answerConfluence
  */
-export function priorOutlook(
+export function confluenceOutlook(
 	model: RootModel,
 	characteristics: Characteristics,
 	question: ConfluenceQuestion
 ): ConfluenceOutlook {
 	const leaves = possibleLeaves(question);
-	const evidence = combine([], contextOf(characteristics, question, model));
+	const context = contextOf(characteristics, question, model);
+	const made = likelihoodsOf(question.findings, characteristics, context.isthmus);
+	const evidence = combine(
+		made.filter((likelihood) => likelihood !== null),
+		context
+	);
 	return outlookOf(leaves, question, estimatorOf(model, leaves, expectedLeaves(model), evidence));
 }
 
@@ -100,14 +126,14 @@ export function priorOutlook(
  * @param model the root under the person's filters; one without evidence is answered, without advice
  * @param characteristics those of the root (characteristicsFor)
  * @param question one that validateQuestion found nothing wrong with
- * @param knownPrior what priorOutlook answers to the same question, where it is known already
+ * @param known what confluenceOutlook answers to the same question after none, one, … of its clear findings, as far as it is known
  * @throws RangeError for a question no sequence of the root fits, or a test the table has no characteristics of
  */
 export function answerConfluence(
 	model: RootModel,
 	characteristics: Characteristics,
 	question: ConfluenceQuestion,
-	knownPrior?: ConfluenceOutlook
+	known: ConfluenceOutlook[] = []
 ): ConfluenceAnswer {
 	const leaves = possibleLeaves(question);
 	const priors = expectedLeaves(model);
@@ -128,17 +154,28 @@ export function answerConfluence(
 		throw new RangeError('No canal sequence of this root fits the question.');
 	}
 	const posterior = estimatorOf(model, leaves, priors, evidence);
-	const prior =
-		knownPrior ??
-		(inquiry.entered.length > 0
-			? priorOutlook(model, characteristics, question)
-			: outlookOf(leaves, question, posterior));
+	const outlooks = [...known];
+	/** After the first so many clear findings; an unclear one adds nothing, so nothing is worked out for it. */
+	const outlookAfter = (count: number) =>
+		(outlooks[count] ??= outlookOf(
+			leaves,
+			question,
+			count === inquiry.entered.length
+				? posterior
+				: estimatorOf(model, leaves, priors, combine(inquiry.entered.slice(0, count), context))
+		));
 	return {
-		prior,
+		prior: outlookAfter(0),
 		posterior: pictureOf(inquiry, posterior),
 		steps: question.findings.map((finding, index) => {
-			const soFar = combine(made.slice(0, index + 1).filter(clear), context);
-			return { finding, fates: fateShares(leaves, exactWeights(leaves, priors, soFar)) };
+			const { fates } = outlookAfter(made.slice(0, index + 1).filter(clear).length);
+			const each = Object.entries(fates);
+			return {
+				finding,
+				fates: Object.fromEntries(each.map(([fate, { mean }]) => [fate, mean])),
+				intervals: Object.fromEntries(each.map(([fate, { interval }]) => [fate, interval])),
+				expected: expectedOf(made[index])
+			};
 		}),
 		superseded: evidence.superseded,
 		assumed: assumedOf(evidence, question),

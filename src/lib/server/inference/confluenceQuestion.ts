@@ -34,9 +34,6 @@ interface QuestionProblem {
 	message: string;
 }
 
-/** Because shortening a separate canal leaves it unfilled, the worse mistake (inference, section 4). */
-export const DEFAULT_THRESHOLD = 0.9;
-
 /** Most canals side by side that the table's leaves tell apart. */
 export const MOST_CANALS = Math.max(...LEAVES.map((leaf) => leafFacts(leaf).width));
 

@@ -99,9 +99,9 @@ function toDto(
 	if (!model.hasEvidence) notes.push(words.notes.noEvidence);
 	return {
 		tableRevision,
-		prior: { fates: answer.prior.fates, anotherCanal: answer.prior.anotherCanal },
+		prior: answer.prior,
 		posterior: answer.posterior,
-		steps: answer.steps.map(({ finding, fates }) => ({ finding, fates, note: supersededNote(finding.test) })),
+		steps: answer.steps.map((step) => ({ ...step, note: supersededNote(step.finding.test) })),
 		next: answer.next.map(({ test, bits, results, effort, risk }) => ({
 			test,
 			bits,

@@ -23,7 +23,7 @@ const MOST_WAITING = 500;
 const MOST_ROOTS = 300;
 /** Coverages kept: some 10 kB each. */
 const MOST_COVERAGES = 300;
-/** Outlooks without findings kept: under 1 kB each. */
+/** Outlooks kept: under 1 kB each. */
 const MOST_OUTLOOKS = 2000;
 /** Coverages that may wait to be worked out for nobody in particular. */
 const MOST_IN_BACKGROUND = 50;
@@ -122,7 +122,7 @@ class Estimator {
 		return remember(this.#teeth, tooth, () => this.#run('tooth', [tooth]));
 	}
 
-	/** Answers a question about a root; what its findings do not move is worked out once for all of them. */
+	/** Answers a question about a root. The outlooks on the way to its last finding are kept: most were answered a moment ago. */
 	async confluence(
 		tooth: string,
 		root: string,
@@ -130,11 +130,23 @@ class Estimator {
 		question: ConfluenceQuestion
 	): Promise<ConfluenceAnswer> {
 		const { model } = await this.root(tooth, root, filters);
-		if (question.findings.length === 0) return this.#run('confluence', [model, question]);
 		const { canals, orifices, search } = question;
-		const key = JSON.stringify([tooth, root, canonical(filters), canals, orifices, search]);
-		const prior = await remember(this.#outlooks, key, () => this.#run('outlook', [model, question]));
-		return this.#run('confluence', [model, question, prior]);
+		const place = [tooth, root, canonical(filters), canals, orifices, search];
+		const clear = question.findings.filter(({ result }) => result !== 'unclear');
+		const outlookAfter = (count: number) => {
+			const findings = clear.slice(0, count);
+			return remember(this.#outlooks, JSON.stringify([...place, findings]), () =>
+				this.#run('outlook', [model, { ...question, findings }])
+			);
+		};
+		const known = await Promise.all(clear.map((_, count) => outlookAfter(count)));
+		const answer = await this.#run('confluence', [model, question, known]);
+		const { fates, meet, anotherCanal } = answer.posterior;
+		this.#outlooks.set(
+			JSON.stringify([...place, clear]),
+			Promise.resolve({ fates, meet, anotherCanal } satisfies ConfluenceOutlook)
+		);
+		return answer;
 	}
 
 	pool(studies: Study[], level?: number) {

@@ -1,5 +1,5 @@
 import { classLabels } from '$lib/anatomy/classes';
-import { leafFacts } from '$lib/anatomy/sequence';
+import { describeSequence, leafFacts, LEAVES } from '$lib/anatomy/sequence';
 import type { Root, Tooth } from '$lib/anatomy/teeth';
 import type { FiltersInForce } from '$lib/schemas/common';
 import type { ExpectationDto } from '$lib/schemas/expectation';
@@ -11,6 +11,8 @@ import type { RootCoverage } from './coverage';
 import { coverageDto } from './coverageRequest';
 import { estimator } from './estimator';
 import type { PooledFeature, RootAnswer } from './tasks';
+import type { RootQuestion } from './types';
+import { studyWeights } from './weights';
 
 /**
  * What to expect of a root under some filters, in the API's shape.
@@ -48,27 +50,48 @@ function toDto(
 			...estimate,
 			observed: observedOf(named, sequence)
 		})),
+		rareSequences: named.flatMap(({ sequence, ...observed }) => rareSequence(sequence, observed)),
 		orifices: expectation.orifices,
 		exits: expectation.exits,
 		fates: expectation.fates,
 		features: features.map(toFeatureDto),
-		questions: model.questions.map(
-			({ id, borrowed, evidence, pooled, predictive, tau, observed, method }) => ({
-				id,
-				text: questionText[id],
-				borrowed,
-				studies: evidence,
-				pooled,
-				predictive,
-				tau,
-				observed,
-				method
-			})
-		),
+		questions: model.questions.map(toQuestionDto),
 		reviews: model.reviews,
 		notPooled: model.notPooled.map(({ source, entry, reason }) => ({ source, entry, reason })),
 		coverage: coverage && coverageDto(coverage)
 	};
+}
+
+function toQuestionDto(question: RootQuestion): ExpectationDto['questions'][number] {
+	const { id, borrowed, evidence, pooled, predictive, tau, observed, method, prior } = question;
+	const weights = studyWeights(evidence, {
+		middle: pooled.median,
+		tau: tau.median,
+		priorSd: prior.sd,
+		model: method.shown
+	});
+	return {
+		id,
+		text: questionText[id],
+		borrowed,
+		studies: evidence.map((study, i) => ({ ...study, weight: weights.studies[i] })),
+		borrowedShare: weights.borrowed,
+		pooled,
+		predictive,
+		tau,
+		observed,
+		method
+	};
+}
+
+/** A sequence that samples name and the tree does not; none for a sequence of the tree. */
+function rareSequence(
+	sequence: string,
+	observed: ExpectationDto['rareSequences'][number]['observed']
+): ExpectationDto['rareSequences'] {
+	if ((LEAVES as readonly string[]).includes(sequence)) return [];
+	const { leaf, fate } = describeSequence(sequence);
+	return [{ sequence, countedWith: leaf, labels: classLabels(sequence), fate, observed }];
 }
 
 /** The range of a sequence over the samples that name it; null if none does. */

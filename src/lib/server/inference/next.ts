@@ -1,7 +1,6 @@
 import { leafFacts } from '$lib/anatomy/sequence';
 import type { Fate } from '$lib/anatomy/sequence';
-import { TESTS } from '$lib/schemas/terms';
-import { DEFAULT_THRESHOLD } from './confluenceQuestion';
+import { TESTS, USUAL_THRESHOLD } from '$lib/schemas/terms';
 import type { Test } from './confluenceQuestion';
 import type { Inquiry } from './inquiry';
 import { combine, findingLikelihood } from './likelihoods';
@@ -127,7 +126,7 @@ function adviceFor(inquiry: Inquiry, findings: FindingLikelihood[], threshold: n
 /** The advice (inference, section 4), and whether the tests not yet made could still change it. */
 export function decide(inquiry: Inquiry): Decision {
 	const { question, entered } = inquiry;
-	const threshold = question.threshold ?? DEFAULT_THRESHOLD;
+	const threshold = question.threshold ?? USUAL_THRESHOLD;
 	const advice = adviceFor(inquiry, entered, threshold);
 	const remaining = advice === null ? [] : remainingTests(inquiry);
 	const allShow = (result: ClearResult) =>

@@ -1,6 +1,11 @@
 import { gatherLenders } from './borrowing';
 import { characteristicsFor } from './characteristics';
-import { answerConfluence, priorOutlook, type ConfluenceAnswer, type ConfluenceOutlook } from './confluence';
+import {
+	answerConfluence,
+	confluenceOutlook,
+	type ConfluenceAnswer,
+	type ConfluenceOutlook
+} from './confluence';
 import type { ConfluenceQuestion } from './confluenceQuestion';
 import { rootCoverage, type RootCoverage } from './coverage';
 import { gatherCounts, type CountSample } from './counts';
@@ -49,9 +54,9 @@ export interface Tasks {
 	root(tooth: string, root: string, filters: Filters): RootAnswer;
 	coverage(tooth: string, root: string, filters: Filters): RootCoverage;
 	tooth(tooth: string): ToothAnswer;
-	/** The part of an answer that its findings do not move. */
+	/** What becomes of the canals, without the rest of an answer. */
 	outlook(model: RootModel, question: ConfluenceQuestion): ConfluenceOutlook;
-	confluence(model: RootModel, question: ConfluenceQuestion, prior?: ConfluenceOutlook): ConfluenceAnswer;
+	confluence(model: RootModel, question: ConfluenceQuestion, known?: ConfluenceOutlook[]): ConfluenceAnswer;
 	pool(studies: Study[], level: number | undefined): Omit<Pooled, 'grid'>;
 	/** A root as it would be if the table were changed. */
 	changed(change: TableChange, place: { tooth: string; root: string; entry: number }): ChangedRoot;
@@ -95,9 +100,9 @@ export function createTasks(table: {
 			canalCounts: gatherCounts(indexed(), tooth, 'canal-count', {}),
 			features: features(tooth, null, {})
 		}),
-		outlook: (model, question) => priorOutlook(model, characteristicsOf(model), question),
-		confluence: (model, question, prior) =>
-			answerConfluence(model, characteristicsOf(model), question, prior),
+		outlook: (model, question) => confluenceOutlook(model, characteristicsOf(model), question),
+		confluence: (model, question, known) =>
+			answerConfluence(model, characteristicsOf(model), question, known),
 		pool(studies, level) {
 			const { grid: _, ...figures } = pool(studies, { level });
 			return figures;

@@ -15,7 +15,11 @@ const educator: SignedIn = {
 
 function ask(path: string, user: SignedIn | null, method = 'GET') {
 	event = requestEvent(new Request(`http://localhost:3000${path}`, { method }), {
-		locals: { requestId: '', preferences: { theme: 'system', numbers: 'iso' }, user }
+		locals: {
+			requestId: '',
+			preferences: { theme: 'system', numbers: 'iso', threshold: 0.9, units: 'percent' },
+			user
+		}
 	});
 }
 

@@ -12,6 +12,7 @@ const cursorSchema = z.object({
 /**
  * Where another page starts: after the row with this key and id, in this order, or with `back` where it ends: before it.
  * Opaque to the caller.
+ * @internal exported for tests, which forge them
  */
 export function encodeCursor(
 	order: string,
@@ -25,6 +26,7 @@ export function encodeCursor(
 /**
  * Reads a cursor made by `encodeCursor`.
  * @throws Problem 422 if it is none, or belongs to another order
+ * @internal exported for tests
  */
 export function decodeCursor(cursor: string, order: string) {
 	const refused = new Problem(422, 'This cursor does not belong to this list.', [
@@ -119,4 +121,9 @@ export async function readPage<Row extends object>(
 		nextCursor: last && (back || more) ? encodeCursor(sort, last.sortKey, last.sortId) : null,
 		previousCursor: first && before > 0 ? encodeCursor(sort, first.sortKey, first.sortId, true) : null
 	};
+}
+
+/** A LIKE pattern that finds the words as typed, with SQL's own wildcards taken literally. */
+export function likePattern(words: string): string {
+	return `%${words.replace(/[\\%_]/g, (character) => `\\${character}`)}%`;
 }

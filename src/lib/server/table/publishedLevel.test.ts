@@ -17,6 +17,7 @@ const measured = (changes: Partial<MeasurementDto>): MeasurementDto => ({
 	min: null,
 	max: null,
 	unit: 'mm',
+	provenance: 'read',
 	verified: true,
 	note: '',
 	...changes

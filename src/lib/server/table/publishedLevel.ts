@@ -9,7 +9,7 @@ interface PublishedLevel {
 }
 
 /** The quantity of the table that speaks of the level. */
-const LEVEL_QUANTITY = 'confluence-distance-from-apex';
+export const LEVEL_QUANTITY = 'confluence-distance-from-apex';
 
 /**
  * The published level of the confluence in a root: of the rows with mean and standard deviation that were seen in

@@ -1,6 +1,7 @@
 import type { RootId, ToothId } from '$lib/anatomy/teeth';
 import type { MeasurementDto } from '$lib/schemas/teeth';
 import { measurementsOf } from './measurements';
+import { LEVEL_QUANTITY } from './publishedLevel';
 
 /** Where nothing at all is published, the drawing needs some length. Common practice, no source. */
 const ASSUMED_LENGTH_MM = 13;
@@ -32,7 +33,7 @@ export async function rootShapeOf(tooth: ToothId, root: RootId): Promise<RootSha
 		(placed) => placed !== null
 	);
 	const length = lengths.find(({ verified }) => verified) ?? lengths[0];
-	const confluence = here('confluence-distance-from-apex', [root]).find((placed) => placed?.verified);
+	const confluence = here(LEVEL_QUANTITY, [root]).find((placed) => placed?.verified);
 	return {
 		length: length ?? { mm: ASSUMED_LENGTH_MM, range: null, source: null, locator: null, verified: false },
 		confluence: confluence ?? null

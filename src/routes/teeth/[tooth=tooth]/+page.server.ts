@@ -26,7 +26,11 @@ export const load: PageServerLoad = async ({ params }) => {
 		...described.rootCounts,
 		...described.canalCounts,
 		...described.lengths,
-		...described.features.flatMap(({ studies }) => studies)
+		...described.features.flatMap(({ studies }) => studies),
+		...roots.flatMap(({ expectation }) => [
+			...expectation.features.flatMap(({ studies }) => studies),
+			...expectation.questions[0].studies
+		])
 	].map(({ source }) => source);
 	return { tooth: described, kind: tooth.kind, roots, sources: await sourcesById([...new Set(cited)]) };
 };

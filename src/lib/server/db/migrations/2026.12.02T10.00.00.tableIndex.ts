@@ -30,12 +30,12 @@ const NAME = `coalesce(json_extract(author.value, '$.family'), json_extract(auth
 const AUTHORS = (source: string) =>
 	`coalesce((SELECT group_concat(${NAME}, ' ') FROM json_each(${source}.csl, '$.author') AS author), '')`;
 
-/** A source without authors is listed under its title, as the screens name it. */
+/** A source without authors is listed under its title, as the screens name it, whatever bracket or quote it begins with. */
 const sourceRow = (where: string) =>
 	`INSERT INTO source_row (source_id, author, authors, title, year)
 		SELECT id, ${plainLetter('substr(named, 1, 1)')} || lower(substr(named, 2)), authors, title, year
 		FROM (SELECT source.id, source.year, lower(coalesce(source.title, source.id)) AS title, ${AUTHORS('source')} AS authors,
-			coalesce(nullif(trim(${AUTHORS('source')}), ''), source.title, source.id) AS named FROM source ${where})`;
+			ltrim(coalesce(nullif(trim(${AUTHORS('source')}), ''), source.title, source.id), '[("“‘ ') AS named FROM source ${where})`;
 /** Between two cells, so that no phrase reaches across: a letter, hence a word for the index, that nobody types. */
 const APART = ' ǀ ';
 const sourceWords = (where: string) =>

@@ -1,13 +1,17 @@
 import { error } from '@sveltejs/kit';
 import { placeAddress } from '$lib/addresses';
 import { rootOf, toothOf } from '$lib/anatomy/teeth';
+import { comparisonsOf } from '$lib/components/root/comparisons';
+import { sortRows, toForestStudies } from '$lib/components/root/forestStudies';
+import { readView } from '$lib/components/root/rootView';
 import { readFilterFields } from '$lib/filterQuery';
-import { readFilters } from '$lib/server/api/filters';
-import { Problem } from '$lib/server/api/problem';
+import { expectationUnder } from '$lib/server/root/expectationUnder';
+import { citedBy } from '$lib/server/root/cited';
 import { expectationOf } from '$lib/server/inference/expectationRequest';
 import { countriesOf } from '$lib/server/table/places';
 import { rootShapeOf } from '$lib/server/table/rootShape';
 import { sourcesById } from '$lib/server/table/sources';
+import { standingsOf } from '$lib/server/table/standings';
 import type { PageServerLoad } from './$types';
 
 export const load: PageServerLoad = async ({ params, url }) => {
@@ -15,36 +19,36 @@ export const load: PageServerLoad = async ({ params, url }) => {
 	const root = rootOf(params.tooth, params.root);
 	if (!tooth || !root) error(404, 'Unknown root.');
 
+	const view = readView(url.searchParams);
 	const filters = readFilterFields(url.searchParams);
-	let filterErrors: { path: string; message: string }[] = [];
-	let expectation;
-	try {
-		expectation = await expectationOf(tooth, root, readFilters(filters));
-	} catch (problem) {
-		if (!(problem instanceof Problem) || problem.status !== 422) throw problem;
-		// The page still answers, unfiltered, and says at which field the filters went wrong.
-		filterErrors = problem.errors;
-		expectation = await expectationOf(tooth, root, {});
-	}
+	const { expectation, errors } = await expectationUnder(tooth, root, filters);
+	const narrowed = filters.length > 0 && errors.length === 0;
 	const shape = await rootShapeOf(tooth.id, root.id);
-	const cited = [
-		...expectation.questions.flatMap(({ studies }) => studies),
-		...expectation.features.flatMap(({ studies }) => studies),
-		...expectation.notPooled,
-		...expectation.reviews
-	].map(({ source }) => source);
-	for (const [name, value] of filters) if (name === 'exclude') cited.push(value);
-	for (const placed of [shape.length, shape.confluence]) if (placed?.source) cited.push(placed.source);
+	const sources = await sourcesById(citedBy(expectation, shape, filters));
+	const standings = await standingsOf(
+		expectation.questions.flatMap(({ studies }) => studies.map(({ entry }) => entry))
+	);
+	const methods = expectation.questions.flatMap(({ studies }) => studies.map(({ method }) => method));
 	return {
 		tooth: { id: tooth.id, name: tooth.name },
 		root: { id: root.id, name: root.name },
 		expectation,
+		/** The figures over all samples, where filters narrowed them. */
+		unfiltered: narrowed ? await expectationOf(tooth, root, {}) : null,
+		rows: Object.fromEntries(
+			expectation.questions.map(({ id, studies }) => [
+				id,
+				sortRows(toForestStudies(studies, sources, standings), view.sort)
+			])
+		),
 		wholeAddress:
 			tooth.roots.includes('whole') && root.id !== 'whole' ? placeAddress(tooth.id, 'whole') : null,
+		view,
 		filters,
-		filterErrors,
+		filterErrors: errors,
 		countries: await countriesOf(tooth.id),
+		comparisons: comparisonsOf(tooth.id, root.id, narrowed ? filters : [], methods),
 		shape,
-		sources: await sourcesById([...new Set(cited)])
+		sources
 	};
 };
