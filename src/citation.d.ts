@@ -2,6 +2,7 @@
 declare module '@citation-js/core' {
 	export const plugins: {
 		config: { get(name: '@bibtex'): { format: { useIdAsLabel: boolean; checkLabel: boolean } } };
+		input: { chain(text: string, options: { forceType: string; generateGraph: boolean }): unknown };
 		output: {
 			format(
 				name: 'bibtex' | 'bibliography',

@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { HandleServerError, ServerInit } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
 import { apiProblems } from '$lib/server/hooks/apiProblems';
+import { bodyLimit } from '$lib/server/hooks/bodyLimit';
 import { compress } from '$lib/server/hooks/compress';
 import { originGuard } from '$lib/server/hooks/originGuard';
 import { preferences } from '$lib/server/hooks/preferences';
@@ -22,6 +23,7 @@ export const handle = sequence(
 	securityHeaders,
 	apiProblems,
 	rateLimit,
+	bodyLimit,
 	originGuard,
 	session,
 	tableAccess,

@@ -139,7 +139,17 @@ export const AUDIT_ACTIONS = [
 	'settings changed',
 	'audit exported',
 	'mail retried',
-	'mail dropped'
+	'mail dropped',
+	'source added',
+	'source changed',
+	'source removed',
+	'source retracted',
+	'retraction lifted',
+	'source appraised',
+	'file attached',
+	'file removed',
+	'table imported',
+	'import undone'
 ] as const;
 export type AuditAction = (typeof AUDIT_ACTIONS)[number];
 
@@ -156,6 +166,29 @@ export type MailKind = (typeof MAIL_KINDS)[number];
 
 export const MAIL_STATES = ['waiting', 'sending', 'sent', 'failed', 'dropped'] as const;
 export type MailState = (typeof MAIL_STATES)[number];
+
+/** Concern that an appraisal of a source leaves, the least first. */
+export const APPRAISAL_GRADES = ['low', 'some', 'high'] as const;
+export type AppraisalGrade = (typeof APPRAISAL_GRADES)[number];
+/** Which appraisals a filter lets pass: any at all, or those that leave at most this concern. */
+export const APPRAISAL_FILTERS = ['any', 'some', 'low'] as const;
+export const APPRAISAL_ANSWERS = ['yes', 'partly', 'no', 'unclear'] as const;
+export type AppraisalAnswer = (typeof APPRAISAL_ANSWERS)[number];
+
+/** Kinds of source the form offers: types of CSL 1.0.2. The list is short; a source of another type keeps it. */
+export const SOURCE_TYPES = [
+	'article-journal',
+	'chapter',
+	'book',
+	'thesis',
+	'paper-conference',
+	'report',
+	'standard',
+	'webpage',
+	'article'
+] as const;
+/** Texts a citation can be pasted as. */
+export const PASTED_FORMATS = ['bibtex', 'ris', 'csl'] as const;
 
 /**
  * Probability of one shared exit from which canals are treated as joined, unless somebody asks for another. High, because shortening

@@ -1,6 +1,8 @@
 import { environment } from './config';
 import { closeDatabase, database } from './db';
 import { estimator, stopEstimator } from './inference/estimator';
+import { recoverImports, stopImports } from './intake/imports';
+import { stopReader } from './intake/reader';
 import { log } from './log';
 import { startMailer, stopMailer } from './mail/mailer';
 import { keepHouse } from './people/housekeeping';
@@ -18,6 +20,7 @@ export async function startUp(): Promise<void> {
 	log.info(report, report.changed ? 'literature seeded' : 'literature unchanged');
 	if (report.unplaced > 0)
 		log.warn({ rows: report.unplaced }, 'rows of the literature could not be placed: see /table/not-placed');
+	await recoverImports(db);
 	if (held.watersmeetStops) return;
 	held.watersmeetStops = true;
 	process.once('sveltekit:shutdown' as 'exit', () => void shutDown());
@@ -42,6 +45,8 @@ async function offerSetUp(): Promise<void> {
 }
 
 async function shutDown(): Promise<void> {
+	await stopImports();
+	await stopReader();
 	await stopMailer();
 	await stopEstimator();
 	await closeDatabase();

@@ -55,6 +55,9 @@ export function countriesNamed(beginning: string): string[] {
 	);
 }
 
+/** Whether a code is a country's own, ISO 3166-1 alpha-3 or XKX. */
+export const isCountryCode = (code: string): boolean => alpha2.has(code);
+
 /** Languages of dental literature, whose own names of countries people type: `Brasil`, `Deutschland`. */
 const LANGUAGES = ['en', 'es', 'pt', 'fr', 'de', 'it', 'tr', 'nl', 'pl', 'id'];
 /** Names that no list of ISO names has. */
@@ -77,6 +80,3 @@ export function everyNameOf(code: string): string[] {
 	);
 	return [...new Set([...inLanguages, ...(EVERYDAY[code] ?? []), code])];
 }
-
-/** Whether a code is a country's own, ISO 3166-1 alpha-3 or XKX. */
-export const isCountryCode = (code: string): boolean => alpha2.has(code);

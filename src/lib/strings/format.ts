@@ -172,3 +172,14 @@ export function momentUtc(iso: string): string {
 export function momentHere(iso: string): string {
 	return new Intl.DateTimeFormat(LOCALE, dayAndTime).format(new Date(iso));
 }
+
+/**
+ * The size of a file: `640 kB`, `2.4 MB`.
+ *
+ * @param bytes whole number; a kilobyte has 1,000 (SI)
+ */
+export function size(bytes: number): string {
+	return bytes < 1_000_000
+		? `${whole.format(Math.max(1, bytes / 1000))}${NO_BREAK}kB`
+		: `${tenths.format(bytes / 1_000_000)}${NO_BREAK}MB`;
+}

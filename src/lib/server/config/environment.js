@@ -24,7 +24,17 @@ const schema = z.object({
 	BODY_SIZE_LIMIT: z
 		.string()
 		.regex(/^\d+[KMG]?$/, 'must be a size in bytes, such as 512K or 5M')
-		.default('2M'),
+		.default('22M'),
+	CROSSREF_URL: z
+		.url({ protocol: /^https?$/, error: "must be the address of Crossref's REST API" })
+		.optional(),
+	BACKUP_DIR: z.string().min(1, 'must name a folder').optional(),
+	BACKUP_KEEP: z.coerce
+		.number('must be a whole number of backups, from 0 (none is made) to 1000')
+		.int('must be a whole number of backups, from 0 (none is made) to 1000')
+		.min(0, 'must be a whole number of backups, from 0 (none is made) to 1000')
+		.max(1000, 'must be a whole number of backups, from 0 (none is made) to 1000')
+		.default(14),
 	RATE_LIMIT_PER_MINUTE: z.coerce
 		.number('must be a whole number, at least 1')
 		.int('must be a whole number, at least 1')
@@ -63,7 +73,7 @@ const schema = z.object({
 		.default(30)
 });
 
-/** @typedef {z.infer<typeof schema> & { ORIGIN: string, MAIL_FROM: string }} Environment */
+/** @typedef {z.infer<typeof schema> & { ORIGIN: string, MAIL_FROM: string, BACKUP_DIR: string }} Environment */
 
 /**
  * Validates the environment and resolves its folders against `root`.
@@ -81,12 +91,16 @@ export function readEnvironment(values, root = process.cwd()) {
 	}
 	const environment = result.data;
 	const origin = new URL(environment.ORIGIN ?? `http://localhost:${environment.PORT}`);
+	const dataDir = path.resolve(root, environment.DATA_DIR);
 	return {
 		environment: {
 			...environment,
 			ORIGIN: origin.origin,
 			MAIL_FROM: environment.MAIL_FROM ?? `Watersmeet <no-reply@${origin.hostname}>`,
-			DATA_DIR: path.resolve(root, environment.DATA_DIR),
+			DATA_DIR: dataDir,
+			BACKUP_DIR: environment.BACKUP_DIR
+				? path.resolve(root, environment.BACKUP_DIR)
+				: path.join(dataDir, 'backups'),
 			LITERATURE_DIR: path.resolve(root, environment.LITERATURE_DIR)
 		}
 	};

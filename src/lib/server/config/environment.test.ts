@@ -22,7 +22,9 @@ describe('the environment', () => {
 			ORIGIN: 'http://localhost:3000',
 			DATA_DIR: path.resolve('/srv/watersmeet/data/runtime'),
 			LITERATURE_DIR: path.resolve('/srv/watersmeet/data/literature'),
-			BODY_SIZE_LIMIT: '2M',
+			BODY_SIZE_LIMIT: '22M',
+			BACKUP_DIR: path.resolve('/srv/watersmeet/data/runtime/backups'),
+			BACKUP_KEEP: 14,
 			RATE_LIMIT_PER_MINUTE: 1200,
 			LOG_LEVEL: 'info',
 			MAIL_FROM: 'Watersmeet <no-reply@localhost>',
@@ -33,7 +35,8 @@ describe('the environment', () => {
 
 	it('takes an empty string as unset, and leaves names it does not know alone', () => {
 		const names = Object.keys(read({}));
-		const empty = Object.fromEntries([...names, 'ADDRESS_HEADER', 'SMTP_URL'].map((name) => [name, '']));
+		const optional = ['ADDRESS_HEADER', 'SMTP_URL', 'CROSSREF_URL'];
+		const empty = Object.fromEntries([...names, ...optional].map((name) => [name, '']));
 		expect(read({ ...empty, PATH: '/usr/bin' })).toEqual(read({}));
 	});
 
@@ -82,6 +85,9 @@ describe('the environment', () => {
 		['ORIGIN', 'ftp://canals.example.org'],
 		['BODY_SIZE_LIMIT', '2 MB'],
 		['BODY_SIZE_LIMIT', '-1'],
+		['CROSSREF_URL', 'crossref'],
+		['BACKUP_KEEP', '-1'],
+		['BACKUP_KEEP', 'all'],
 		['RATE_LIMIT_PER_MINUTE', '0'],
 		['RATE_LIMIT_PER_MINUTE', '0.5'],
 		['RATE_LIMIT_PER_MINUTE', 'many'],

@@ -2,6 +2,8 @@ import path from 'node:path';
 import type { Sequelize } from 'sequelize';
 import { openDatabase } from './connection';
 import { migrate } from './migrate';
+
+import { defineIntake } from './models/intake';
 import { defineDesk } from './models/desk';
 import { defineLiterature } from './models/literature';
 import { defineMail } from './models/mail';
@@ -25,6 +27,7 @@ export async function connect(dataDir: string): Promise<Sequelize> {
 	const sequelize = openDatabase(file);
 	defineLiterature(sequelize);
 	defineSupplements(sequelize);
+	defineIntake(sequelize);
 	definePeople(sequelize);
 	defineMail(sequelize);
 	defineDesk(sequelize);

@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
 import { Op, type Sequelize, type Transaction } from 'sequelize';
+import { SourceRevision } from '../db/models/intake';
 import { Entry, Figure, Revision, Sample, Source, TableRevision, UnplacedRow } from '../db/models/literature';
 import { citable, yearOf } from './citable';
 import type { CslSource, LiteratureFiles } from './literatureFiles';
@@ -102,7 +103,11 @@ async function seedSources(db: Sequelize, sources: CslSource[]) {
 			seedHash: createHash('sha256').update(text).digest('hex')
 		};
 	});
-	const changed = rows.filter((row) => known.get(row.id) !== row.seedHash);
+	// What an educator has changed stays as it is, whatever the files say.
+	const edited = new Set(
+		(await SourceRevision.findAll({ attributes: ['sourceId'] })).map(({ sourceId }) => sourceId)
+	);
+	const changed = rows.filter((row) => known.get(row.id) !== row.seedHash && !edited.has(row.id));
 	const fields = Object.keys(rows[0] ?? {}).filter((field) => field !== 'id' && field !== 'retracted');
 	await inChunks(db, changed, async (chunk, transaction) => {
 		await Source.bulkCreate(chunk, {
