@@ -218,10 +218,10 @@ test('a form sent after the sign-in has ended keeps what was typed: in place wit
 	await tab.goto('/account');
 	await tab.locator('summary', { hasText: 'Ada Lock' }).click();
 	await tab.getByRole('button', { name: 'Sign out' }).click();
-	await ada.getByLabel('Name', { exact: true }).fill('Ada <i>"Lock"</i>, née Wëir');
+	await ada.getByRole('textbox', { name: 'Name', exact: true }).fill('Ada <i>"Lock"</i>, née Wëir');
 	await ada.getByRole('button', { name: 'Keep the name' }).click();
 	await expect(ada.getByRole('alert')).toContainText('Your sign-in has ended. What you typed is still here');
-	await expect(ada.getByLabel('Name', { exact: true })).toHaveValue('Ada <i>"Lock"</i>, née Wëir');
+	await expect(ada.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue('Ada <i>"Lock"</i>, née Wëir');
 	const opened = ada.waitForEvent('popup');
 	await ada.getByRole('link', { name: 'Sign in in a new tab' }).click();
 	await signIn(await opened, ADA);
@@ -229,12 +229,12 @@ test('a form sent after the sign-in has ended keeps what was typed: in place wit
 	await ada.getByRole('button', { name: 'Keep the name' }).click();
 	await expect(ada.getByRole('status')).toHaveText('Kept.');
 	await ada.reload();
-	await expect(ada.getByLabel('Name', { exact: true })).toHaveValue('Ada <i>"Lock"</i>, née Wëir');
+	await expect(ada.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue('Ada <i>"Lock"</i>, née Wëir');
 
 	const plain = await newBrowser(browser, { javaScriptEnabled: false });
 	await signIn(plain, ADA);
 	await plain.goto('/account');
-	await plain.getByLabel('Name', { exact: true }).fill('Ada\u2003Lock & Weir');
+	await plain.getByRole('textbox', { name: 'Name', exact: true }).fill('Ada\u2003Lock & Weir');
 	await plain.context().clearCookies();
 	await plain.getByRole('button', { name: 'Keep the name' }).click();
 	await expect(plain.getByRole('heading', { name: 'Sign in again' })).toBeVisible();
@@ -248,7 +248,7 @@ test('a form sent after the sign-in has ended keeps what was typed: in place wit
 	await expect(plain.getByRole('cell')).toHaveText('Ada\u2003Lock & Weir');
 	await plain.getByRole('button', { name: 'Send it now' }).click();
 	await expect(plain.getByRole('status')).toHaveText('Kept.');
-	await expect(plain.getByLabel('Name', { exact: true })).toHaveValue('Ada\u2003Lock & Weir');
+	await expect(plain.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue('Ada\u2003Lock & Weir');
 	// The whole menu works without scripts too.
 	await plain.locator('summary', { hasText: 'Ada' }).click();
 	await plain.getByRole('button', { name: 'Sign out' }).click();

@@ -20,6 +20,7 @@ export const administration = {
 	first: 'First page',
 	saved: 'Kept.',
 	people: {
+		filter: 'Narrow the list of people',
 		search: 'Name or address',
 		role: 'Role',
 		anyRole: 'Any role',
@@ -83,6 +84,7 @@ export const administration = {
 		againNamed: (email: string) => `Send the invitation of ${email} again`,
 		revoke: 'Take back',
 		revokeNamed: (email: string) => `Take the invitation of ${email} back`,
+		sentAgain: 'The invitation is on its way again; the link before no longer works.',
 		revoked: 'The invitation no longer works.',
 		hasAccount: 'This address has an account already.',
 		invitedAlready: 'This address is invited already: send that invitation again.',
@@ -101,6 +103,7 @@ export const administration = {
 		lead: 'Who did what, when, and from where. Nothing can be changed or removed here.',
 		action: 'What',
 		anyAction: 'Anything',
+		filter: 'Narrow the audit log',
 		search: 'Who, whom, detail or address',
 		from: 'From',
 		to: 'To',

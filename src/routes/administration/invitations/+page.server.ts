@@ -45,7 +45,7 @@ export const actions: Actions = {
 		const form = await readFormData(event);
 		if ((await invitationLimit.take(user.id)) > 0) return refused('pending', form, { '': words.wait }, 429);
 		const sent = (await sendAgain(user, idOf(form))) ?? error(404, 'There is no such invitation.');
-		return { ...done('pending', administration.mail.retried), link: shown(sent.link) };
+		return { ...done('pending', words.sentAgain), link: shown(sent.link) };
 	},
 	revoke: async (event) => {
 		requireRole('administrator');
