@@ -213,6 +213,7 @@ test('a form sent after the sign-in has ended keeps what was typed: in place wit
 	test.slow();
 	const ada = await newBrowser(browser);
 	await signIn(ada, ADA);
+	await expect(ada.locator('summary', { hasText: 'Ada Lock' })).toBeVisible();
 	await ada.goto('/account');
 	const tab = await ada.context().newPage();
 	await tab.goto('/account');
@@ -221,7 +222,9 @@ test('a form sent after the sign-in has ended keeps what was typed: in place wit
 	await ada.getByRole('textbox', { name: 'Name', exact: true }).fill('Ada <i>"Lock"</i>, née Wëir');
 	await ada.getByRole('button', { name: 'Keep the name' }).click();
 	await expect(ada.getByRole('alert')).toContainText('Your sign-in has ended. What you typed is still here');
-	await expect(ada.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue('Ada <i>"Lock"</i>, née Wëir');
+	await expect(ada.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue(
+		'Ada <i>"Lock"</i>, née Wëir'
+	);
 	const opened = ada.waitForEvent('popup');
 	await ada.getByRole('link', { name: 'Sign in in a new tab' }).click();
 	await signIn(await opened, ADA);
@@ -229,7 +232,9 @@ test('a form sent after the sign-in has ended keeps what was typed: in place wit
 	await ada.getByRole('button', { name: 'Keep the name' }).click();
 	await expect(ada.getByRole('status')).toHaveText('Kept.');
 	await ada.reload();
-	await expect(ada.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue('Ada <i>"Lock"</i>, née Wëir');
+	await expect(ada.getByRole('textbox', { name: 'Name', exact: true })).toHaveValue(
+		'Ada <i>"Lock"</i>, née Wëir'
+	);
 
 	const plain = await newBrowser(browser, { javaScriptEnabled: false });
 	await signIn(plain, ADA);
@@ -261,7 +266,9 @@ test('with the mail server down nothing else fails, and the mail goes out once w
 	test.slow();
 	const [first, ada] = [await newBrowser(browser), await newBrowser(browser)];
 	await signIn(ada, ADA);
+	await expect(ada.locator('summary', { hasText: 'Ada' })).toBeVisible();
 	await signIn(first, FIRST);
+	await expect(first.locator('summary', { hasText: 'Firsty' })).toBeVisible();
 	await mailbox.down();
 	const before = mailbox.letters.length;
 	await ada.goto('/account');
@@ -296,12 +303,14 @@ test('an administrator finds people, changes roles, closes an account, and reads
 	await signIn(ada, 'lock@example.org');
 	await expect(ada.locator('summary', { hasText: 'Ada' })).toBeVisible();
 	await signIn(first, FIRST);
+	await expect(first.locator('summary', { hasText: 'Firsty' })).toBeVisible();
 	await first.goto('/administration/people');
 	await check(first);
 	await first.getByLabel('Name or address').fill('LOCK@');
 	await first.getByRole('button', { name: 'Show' }).click();
 	await expect(first.getByText('One person')).toBeVisible();
 	await first.getByRole('link', { name: /^Ada/ }).click();
+	await expect(first.getByRole('heading', { name: /^Ada/, level: 1 })).toBeVisible();
 	await check(first);
 	await first.getByRole('checkbox', { name: /Dentist/ }).check();
 	await first.getByRole('button', { name: 'Keep the roles' }).click();
@@ -316,6 +325,7 @@ test('an administrator finds people, changes roles, closes an account, and reads
 
 	await first.goto('/administration/people?q=first');
 	await first.getByRole('link', { name: 'Firsty' }).click();
+	await expect(first.getByRole('heading', { name: 'Firsty', level: 1 })).toBeVisible();
 	await first.getByRole('button', { name: 'Close the account' }).click();
 	await expect(first.getByText('This is the last administrator.')).toBeVisible();
 
@@ -346,6 +356,7 @@ test('the remaining pages pass axe and fit a phone', async ({ browser }) => {
 	await check(first, '/sign-in');
 	await check(first, '/reset');
 	await signIn(first, FIRST);
+	await expect(first.locator('summary', { hasText: 'Firsty' })).toBeVisible();
 	for (const address of [
 		'/account',
 		'/account/tokens',
