@@ -27,13 +27,20 @@ export const PARAMETERS: Record<string, string> = {
 	root: 'MB',
 	id: '999999999',
 	entry: '1',
-	secret: 'no-such-secret'
+	secret: 'no-such-secret',
+	name: 'no-such-name',
+	file: 'no-such-file',
+	revision: '999999999'
 };
 
 const everybody: Expectation = { access: 'everybody' };
 const table: Expectation = { access: 'table' };
 const account: Expectation = { access: 'account' };
 const administrator: Expectation = { access: ['administrator'] };
+const educator: Expectation = { access: ['educator'] };
+const importer: Expectation = { access: ['educator', 'administrator'] };
+const writer: Expectation = { access: ['educator'], scope: 'table:write' };
+const aRevision: Expectation = { access: 'table', parameters: { revision: '1' } };
 
 /**
  * The wall: who may use each page, each action of a page, and each method of an endpoint. A route that is not here fails the test
@@ -44,6 +51,13 @@ export const WALL: Record<string, Expectation> = {
 	'page /about': everybody,
 	'page /api': everybody,
 	'page /how': table,
+	'page /compare': table,
+	'page /sources': table,
+	'page /table': table,
+	'page /table/[entry]': table,
+	'page /table/revisions': table,
+	'GET /teeth/[tooth=tooth]/[root=root]/drawing.svg': table,
+	'GET /teeth/[tooth=tooth]/[root=root]/samples.csv': table,
 	'page /sources/[id]': { access: 'table', parameters: { id: 'weine-1969' } },
 	'page /table/not-placed': table,
 	'page /teeth/[tooth=tooth]': table,
@@ -112,6 +126,42 @@ export const WALL: Record<string, Expectation> = {
 	'action /administration/mail?/retry': administrator,
 	'action /administration/mail?/drop': administrator,
 
+	'page /desk': educator,
+	'GET /desk/context': educator,
+	'page /desk/characteristics': educator,
+	'page /desk/characteristics/[name]': educator,
+	'action /desk/characteristics/[name]?/act': educator,
+	'action /desk/characteristics/[name]?/save': educator,
+	'page /desk/entries/[id]': educator,
+	'action /desk/entries/[id]?/act': educator,
+	'action /desk/entries/[id]?/check': educator,
+	'action /desk/entries/[id]?/save': educator,
+	'page /desk/entries/new': educator,
+	'action /desk/entries/new?/check': educator,
+	'action /desk/entries/new?/save': educator,
+	'page /desk/sources/[id]': educator,
+	'action /desk/sources/[id]?/appraise': educator,
+	'action /desk/sources/[id]?/attach': educator,
+	'action /desk/sources/[id]?/check': educator,
+	'action /desk/sources/[id]?/detach': educator,
+	'action /desk/sources/[id]?/remove': educator,
+	'action /desk/sources/[id]?/retract': educator,
+	'action /desk/sources/[id]?/save': educator,
+	'action /desk/sources/[id]?/unretract': educator,
+	'GET /desk/sources/[id]/files/[file]': educator,
+	'page /desk/sources/new': educator,
+	'action /desk/sources/new?/doi': educator,
+	'action /desk/sources/new?/paste': educator,
+	'action /desk/sources/new?/save': educator,
+	'page /desk/import': importer,
+	'action /desk/import?/upload': importer,
+	'page /desk/import/[id]': importer,
+	'action /desk/import/[id]?/cancel': importer,
+	'action /desk/import/[id]?/discard': importer,
+	'action /desk/import/[id]?/map': importer,
+	'action /desk/import/[id]?/start': importer,
+	'GET /desk/import/[id]/progress': importer,
+
 	'GET /api/v1/teeth': table,
 	'GET /api/v1/teeth/[tooth]': table,
 	'GET /api/v1/teeth/[tooth]/roots/[root]/expectation': table,
@@ -120,6 +170,19 @@ export const WALL: Record<string, Expectation> = {
 	'GET /api/v1/entries/[id]': { access: 'table', parameters: { id: '1' } },
 	'GET /api/v1/sources': table,
 	'GET /api/v1/sources/[id]': { access: 'table', parameters: { id: 'weine-1969' } },
+	'GET /api/v1/search': table,
+	'GET /api/v1/sources.bib': table,
+	'GET /api/v1/sources.json': table,
+	'GET /api/v1/sources.ris': table,
+	'GET /api/v1/table.csv': table,
+	'GET /api/v1/table.json': table,
+	'GET /api/v1/table-revisions': table,
+	'GET /api/v1/table-revisions/[revision]/table.csv': aRevision,
+	'GET /api/v1/table-revisions/[revision]/table.json': aRevision,
+	'POST /api/v1/entries': writer,
+	'PATCH /api/v1/entries/[id]': writer,
+	'DELETE /api/v1/entries/[id]': writer,
+	'GET /api/v1/entries/[id]/draft': writer,
 	'POST /api/v1/pool': table,
 	'POST /api/v1/confluence': table,
 	'POST /api/v1/confluence-level': table,

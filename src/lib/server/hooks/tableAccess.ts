@@ -11,7 +11,7 @@ import { isApi } from './apiProblems';
 const OPEN_ROUTES = [
 	/^\/(about|health|preferences|api)$/,
 	/^\/api\/v1\/(health|me|people|audit|openapi\.json)$/,
-	/^\/(sign-in|sign-out|set-up|reset|invitation|confirm-email|account|administration)(\/|$)/
+	/^\/(sign-in|sign-out|set-up|reset|invitation|confirm-email|account|administration|desk)(\/|$)/
 ];
 
 /** Keeps visitors from the table where an administrator has closed it, pages and API alike; a token needs a scope for it. */
