@@ -27,13 +27,17 @@ export const PARAMETERS: Record<string, string> = {
 	root: 'MB',
 	id: '999999999',
 	entry: '1',
-	secret: 'no-such-secret'
+	secret: 'no-such-secret',
+	name: 'no-such.name.any',
+	revision: '1'
 };
 
 const everybody: Expectation = { access: 'everybody' };
 const table: Expectation = { access: 'table' };
 const account: Expectation = { access: 'account' };
 const administrator: Expectation = { access: ['administrator'] };
+const educator: Expectation = { access: ['educator'] };
+const educatorApi: Expectation = { access: ['educator'], scope: 'table:write' };
 
 /**
  * The wall: who may use each page, each action of a page, and each method of an endpoint. A route that is not here fails the test
@@ -111,6 +115,28 @@ export const WALL: Record<string, Expectation> = {
 	'page /administration/mail': administrator,
 	'action /administration/mail?/retry': administrator,
 	'action /administration/mail?/drop': administrator,
+
+	'page /desk': educator,
+	'GET /desk/context': educator,
+	'page /desk/entries/new': educator,
+	'action /desk/entries/new?/check': educator,
+	'action /desk/entries/new?/save': educator,
+	'page /desk/entries/[id]': educator,
+	'action /desk/entries/[id]?/check': educator,
+	'action /desk/entries/[id]?/save': educator,
+	'action /desk/entries/[id]?/act': educator,
+	'page /desk/characteristics': educator,
+	'page /desk/characteristics/[name]': educator,
+	'action /desk/characteristics/[name]?/save': educator,
+	'action /desk/characteristics/[name]?/act': educator,
+	'page /table/revisions': table,
+	'POST /api/v1/entries': educatorApi,
+	'PATCH /api/v1/entries/[id]': educatorApi,
+	'DELETE /api/v1/entries/[id]': educatorApi,
+	'GET /api/v1/entries/[id]/draft': educatorApi,
+	'GET /api/v1/table-revisions': table,
+	'GET /api/v1/table-revisions/[revision]/table.csv': table,
+	'GET /api/v1/table-revisions/[revision]/table.json': table,
 
 	'GET /api/v1/teeth': table,
 	'GET /api/v1/teeth/[tooth]': table,

@@ -14,6 +14,9 @@ export const LICENCE_NOTE =
 	'Figures and bibliographic facts as the sources named in each row published them: cite those sources. ' +
 	'No licence for the compilation itself has been settled yet.';
 
+/** Keys of a row in JSON, in this order whatever made it. */
+const COLUMNS = [...OBSERVATION_COLUMNS];
+
 type Row = Omit<Observation, 'count_derived'> & { count_derived: number; entry: number };
 
 /** The newest revision and when it was published. */
@@ -57,9 +60,20 @@ async function* observations(
 }
 
 /** The table as CSV text in pieces: the columns of observations.csv, cells made harmless for spreadsheets. */
-export async function* tableCsv(db: Sequelize, filters: EntryFilters, revision: number) {
+export const tableCsv = (db: Sequelize, filters: EntryFilters, revision: number) =>
+	csvPieces(observations(db, filters, revision));
+
+/** The table as JSON text in pieces, with its revision, date and licence note in front. */
+export const tableJson = (
+	db: Sequelize,
+	filters: EntryFilters,
+	published: { revision: number; date: string }
+) => jsonPieces(observations(db, filters, published.revision), { ...published, filters });
+
+/** Rows as CSV text in pieces. */
+export async function* csvPieces(chunks: AsyncGenerator<Observation[]>) {
 	yield stringify([[...OBSERVATION_COLUMNS]]);
-	for await (const rows of observations(db, filters, revision)) {
+	for await (const rows of chunks) {
 		yield stringify(
 			rows.map((row) => OBSERVATION_COLUMNS.map((column) => harmlessCell(String(row[column] ?? '')))),
 			{ quoted_match: /[\r\n]/ }
@@ -67,17 +81,16 @@ export async function* tableCsv(db: Sequelize, filters: EntryFilters, revision: 
 	}
 }
 
-/** The table as JSON text in pieces, with its revision, date and licence note in front. */
-export async function* tableJson(
-	db: Sequelize,
-	filters: EntryFilters,
-	{ revision, date }: { revision: number; date: string }
+/** Rows as JSON text in pieces. */
+export async function* jsonPieces(
+	chunks: AsyncGenerator<Observation[]>,
+	{ revision, date, filters }: { revision: number; date: string; filters: EntryFilters }
 ) {
 	const head = JSON.stringify({ revision, date, licence: LICENCE_NOTE, filters });
 	yield `${head.slice(0, -1)},"rows":[`;
 	let between = '\n';
-	for await (const rows of observations(db, filters, revision)) {
-		yield rows.map((row, index) => (index === 0 ? between : ',\n') + JSON.stringify(row)).join('');
+	for await (const rows of chunks) {
+		yield rows.map((row, index) => (index === 0 ? between : ',\n') + JSON.stringify(row, COLUMNS)).join('');
 		between = ',\n';
 	}
 	yield '\n]}\n';
