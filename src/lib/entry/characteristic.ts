@@ -3,7 +3,7 @@ import { checks as words } from '$lib/strings/checks';
 import { Remarks, type Remark } from './remarks';
 
 export const BASES = ['published', 'derived', 'assumed'] as const;
-export type Basis = (typeof BASES)[number];
+type Basis = (typeof BASES)[number];
 
 /** What a person may change; what it is a characteristic of stays. */
 export interface CharacteristicContent {

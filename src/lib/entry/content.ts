@@ -75,16 +75,7 @@ export const ENTRY_FIELDS = [
 export type EntryField = (typeof ENTRY_FIELDS)[number];
 
 /** Those of them that say which sample it is. */
-export const SAMPLE_FIELDS = [
-	'source',
-	'tooth',
-	'root',
-	'scope',
-	'country',
-	'method',
-	'subgroup',
-	'total'
-] as const;
+const SAMPLE_FIELDS = ['source', 'tooth', 'root', 'scope', 'country', 'method', 'subgroup', 'total'] as const;
 
 const written = (number: number | null): string => (number === null ? '' : String(number));
 

@@ -94,15 +94,14 @@ export function merge(
 	const taken = new Map(
 		clashes(base, yours, theirs).map(({ part, proposed }) => [part, choices.get(part) ?? proposed])
 	);
-	const fields = ENTRY_FIELDS.filter((field) => taken.get(field) === 'theirs').map((field) => [
-		field,
-		theirs[field]
-	]);
+	const fields = Object.fromEntries(
+		ENTRY_FIELDS.filter((field) => taken.get(field) === 'theirs').map((field) => [field, theirs[field]])
+	) as Partial<EntryContent>;
 	const figures = new Map<string, FigureContent>();
 	for (const { category } of [...theirs.figures, ...yours.figures]) {
 		const side = taken.get(FIGURE + category) === 'theirs' ? theirs : yours;
 		const figure = side.figures.find((one) => one.category === category);
 		if (figure) figures.set(category, figure);
 	}
-	return { ...yours, ...Object.fromEntries(fields), figures: [...figures.values()] };
+	return { ...yours, ...fields, figures: [...figures.values()] };
 }

@@ -1,5 +1,5 @@
 /** What checks have to say. */
-export type RemarkLevel = 'error' | 'warning' | 'note';
+type RemarkLevel = 'error' | 'warning' | 'note';
 
 /** Something to say of one field. `path` is dotted: `total`, `figures` for the list as a whole, `figures.2.count`. */
 export interface Remark {

@@ -5,7 +5,7 @@ import type { Role } from '$lib/schemas/terms';
 export type Standing = 'never' | 'published' | 'withdrawn';
 
 /** What stands beside it on the desk. */
-export interface Work {
+interface Work {
 	state: 'draft' | 'in-review';
 	/** Ids of everyone who has changed the draft. */
 	editors: readonly string[];

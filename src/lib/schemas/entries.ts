@@ -34,7 +34,7 @@ export const entryBodySchema = z.strictObject(fields);
 export type EntryBody = z.infer<typeof entryBodySchema>;
 
 /** What PATCH may do. `save` is meant where only `changes` is given. */
-export const PATCH_ACTIONS = [
+const PATCH_ACTIONS = [
 	'save',
 	'ask-review',
 	'take-back',

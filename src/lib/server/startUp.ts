@@ -8,6 +8,7 @@ import { startMailer, stopMailer } from './mail/mailer';
 import { keepHouse } from './people/housekeeping';
 import { makeSetUpLink } from './people/links';
 import { readLiteratureFiles } from './table/literatureFiles';
+import { finishEffects } from './table/publishing';
 import { seedLiterature } from './table/seed';
 
 // Hot reload runs init again; the process must not collect listeners.
@@ -28,7 +29,8 @@ export async function startUp(): Promise<void> {
 	await startMailer();
 	await offerSetUp();
 	// Nobody waits for this: it starts the worker, so that the first visitor does not pay for it, and has the table's coverage ready.
-	estimator()
+	finishEffects()
+		.then(estimator)
 		.then((current) => current.tableCoverage())
 		.catch((error: unknown) =>
 			log.error({ err: error }, 'the coverage of the table could not be worked out')

@@ -28,6 +28,7 @@ export const PAGES = {
 	table: '/table?limit=5&column=figures&column=total&column=source&column=year&column=standing',
 	'table with wrong filters': '/table?tooth=16&method=guess&q=zzzz',
 	entry: '/table/40',
+	'record of the table': '/table/revisions',
 	sources: '/sources?q=vertucci',
 	source: '/sources/cleghorn-2007',
 	'source without authors': '/sources/anon-canine-2023',

@@ -10,7 +10,7 @@ import {
 import type { DeskPerson } from './entryDrafts';
 
 /** A Beta distribution as it is drawn; null for a standard deviation. */
-export function shapeOf({ betaA: a, betaB: b }: CharacteristicContent) {
+function shapeOf({ betaA: a, betaB: b }: CharacteristicContent) {
 	if (a === null || b === null) return null;
 	const interval: [number, number] = [betaQuantile(0.025, a, b), betaQuantile(0.975, a, b)];
 	return { a, b, mean: a / (a + b), interval };

@@ -13,7 +13,7 @@ import { revisionsOf } from './entries';
 import { readEntry, type EntryNow } from './entryState';
 
 /** The body of a request as it would have been typed. */
-export function bodyText(body: EntryBody): EntryText {
+function bodyText(body: EntryBody): EntryText {
 	const written = (number: number | null | undefined) =>
 		number === null || number === undefined ? '' : String(number);
 	return {
@@ -26,7 +26,7 @@ export function bodyText(body: EntryBody): EntryText {
 }
 
 /** Checks an entry against the table. */
-export async function checkAgainstTable(db: Sequelize, text: EntryText, self: number | null) {
+async function checkAgainstTable(db: Sequelize, text: EntryText, self: number | null) {
 	return checkEntry(text, checkContext(await contextFor(db, text, self)));
 }
 

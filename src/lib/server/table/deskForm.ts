@@ -23,7 +23,7 @@ export async function sourceSuggestions(): Promise<{ value: string; label: strin
 }
 
 /** A form as it was sent, with a row for the sequence that a button without scripts picked. */
-export function sentText(form: FormData): EntryText {
+function sentText(form: FormData): EntryText {
 	const text = textOfForm(form);
 	const picked = form.get('add');
 	return typeof picked === 'string' ? { ...text, figures: [...text.figures, blankFigure(picked)] } : text;

@@ -140,7 +140,7 @@ type Fault = Omit<DeskEntry, 'remarks'> & {
 };
 
 /** Published figures that contradict themselves: classes above their total, and percentages that do not fit their counts. */
-async function arithmeticProblems(db: Sequelize): Promise<DeskList<DeskEntry & { figures: string[] }>> {
+async function arithmeticProblems(db: Sequelize): Promise<DeskList<DeskEntry>> {
 	const sums = await db.query<Fault>(
 		`SELECT ${ENTRY_COLUMNS}, NULL AS category, SUM(figure.count) AS count, 0 AS percent, sample.total
 			${FROM} JOIN figure ON figure.entry_id = entry.id
@@ -158,16 +158,16 @@ async function arithmeticProblems(db: Sequelize): Promise<DeskList<DeskEntry & {
 	const unfit = shares.filter(
 		({ count, total, percent }) => Math.abs((100 * count) / total - percent) > roundingOf(percent) + 1e-9
 	);
-	const found = new Map<number, DeskEntry & { figures: string[] }>();
+	const found = new Map<number, DeskEntry>();
 	for (const { category, count, percent, total, ...item } of [...sums, ...unfit]) {
 		const { id, source, tooth, root, measure, author, at } = item;
-		const fault = found.get(id) ?? { id, source, tooth, root, measure, author, at, remarks: [], figures: [] };
+		const fault = found.get(id) ?? { id, source, tooth, root, measure, author, at, remarks: [] };
 		found.set(id, fault);
-		fault.figures.push(
+		fault.remarks.push(
 			category === null ? `${count} > ${total}` : `${category}: ${count} / ${total}, ${percent} %`
 		);
 	}
-	const items = [...found.values()].map((item) => ({ ...item, remarks: item.figures }));
+	const items = [...found.values()];
 	return { items: items.slice(0, MOST_SHOWN), total: items.length };
 }
 

@@ -79,8 +79,8 @@ export async function entryFor(
 	return now;
 }
 
-/** Rows of an entry nobody has seen published yet. */
-export interface NewEntry {
+/** An entry nobody has seen published yet. */
+interface NewEntry {
 	content: EntryContent;
 	why?: string;
 }
@@ -89,6 +89,7 @@ export interface NewEntry {
  * Writes new entries as drafts, or as published (which only an administrator's import does, and which needs `recordTable` afterwards).
  * A few hundred at a time: all in one transaction of the caller's.
  * @returns their ids, in the order given
+ * @public for the import
  */
 export async function createEntries(
 	entries: readonly NewEntry[],
@@ -203,11 +204,7 @@ const stale = (entry: EntryNow, base: EntryContent, yours: EntryContent) =>
 	new StaleEdit(clashes(base, yours, entry.content), entry.content, entry.number, entry.who);
 
 /** What an edit that began at a revision began from. */
-export async function contentAt(
-	id: number,
-	number: number,
-	transaction?: Transaction
-): Promise<EntryContent> {
+async function contentAt(id: number, number: number, transaction?: Transaction): Promise<EntryContent> {
 	const revision = await Revision.findOne({ where: { entryId: id, number }, transaction });
 	const content = contentOf(revision?.after ?? null);
 	if (!content) throw unknownEntry();

@@ -5,7 +5,7 @@ import { EntryWork } from '../db/models/desk';
 import { Entry, Figure, Revision, Sample } from '../db/models/literature';
 
 /** What a revision records besides the content. */
-export type RecordedState = 'draft' | 'in-review' | 'discarded' | 'published' | 'withdrawn';
+type RecordedState = 'draft' | 'in-review' | 'discarded' | 'published' | 'withdrawn';
 
 /** An entry as a revision keeps it. */
 export interface Recorded extends EntryContent {
@@ -69,7 +69,7 @@ export async function readEntry(id: number, transaction?: Transaction): Promise<
 		content: draft ?? last,
 		number: revisions[0]?.number ?? 0,
 		who: revisions[0]?.who ?? '',
-		publishedBy: publication ? await authorOf(publication, revisions) : null
+		publishedBy: publication ? authorOf(publication, revisions) : null
 	};
 }
 

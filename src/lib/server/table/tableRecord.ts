@@ -8,7 +8,7 @@ import type { Place } from './estimates';
 const MOST_NAMED = 20;
 
 /** What became of an entry. */
-export interface ChangedEntry {
+interface ChangedEntry {
 	entry: number;
 	change: 'published' | 'withdrawn';
 	tooth: string;
@@ -18,7 +18,7 @@ export interface ChangedEntry {
 }
 
 /** How far one root's main figures moved. */
-export interface Effect extends Place {
+interface Effect extends Place {
 	before: RootFigures;
 	/** Null while it is being worked out. */
 	after: RootFigures | null;
