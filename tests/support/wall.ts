@@ -27,6 +27,7 @@ export const PARAMETERS: Record<string, string> = {
 	root: 'MB',
 	id: '999999999',
 	entry: '1',
+	file: 'no-such-file',
 	secret: 'no-such-secret'
 };
 
@@ -34,6 +35,9 @@ const everybody: Expectation = { access: 'everybody' };
 const table: Expectation = { access: 'table' };
 const account: Expectation = { access: 'account' };
 const administrator: Expectation = { access: ['administrator'] };
+const educator: Expectation = { access: ['educator'] };
+/** Educators import drafts; an administrator may publish. */
+const importer: Expectation = { access: ['educator', 'administrator'] };
 
 /**
  * The wall: who may use each page, each action of a page, and each method of an endpoint. A route that is not here fails the test
@@ -112,6 +116,29 @@ export const WALL: Record<string, Expectation> = {
 	'action /administration/mail?/retry': administrator,
 	'action /administration/mail?/drop': administrator,
 
+	'page /desk/sources/new': educator,
+	'action /desk/sources/new?/doi': educator,
+	'action /desk/sources/new?/paste': educator,
+	'action /desk/sources/new?/save': educator,
+	'page /desk/sources/[id]': educator,
+	'action /desk/sources/[id]?/save': educator,
+	'action /desk/sources/[id]?/retract': educator,
+	'action /desk/sources/[id]?/unretract': educator,
+	'action /desk/sources/[id]?/check': educator,
+	'action /desk/sources/[id]?/appraise': educator,
+	'action /desk/sources/[id]?/attach': educator,
+	'action /desk/sources/[id]?/detach': educator,
+	'action /desk/sources/[id]?/remove': educator,
+	'GET /desk/sources/[id]/files/[file]': educator,
+	'page /desk/import': importer,
+	'action /desk/import?/upload': importer,
+	'page /desk/import/[id]': importer,
+	'action /desk/import/[id]?/map': importer,
+	'action /desk/import/[id]?/start': importer,
+	'action /desk/import/[id]?/cancel': importer,
+	'action /desk/import/[id]?/discard': importer,
+	'GET /desk/import/[id]/progress': importer,
+
 	'GET /api/v1/teeth': table,
 	'GET /api/v1/teeth/[tooth]': table,
 	'GET /api/v1/teeth/[tooth]/roots/[root]/expectation': table,
@@ -119,6 +146,10 @@ export const WALL: Record<string, Expectation> = {
 	'GET /api/v1/entries': table,
 	'GET /api/v1/entries/[id]': { access: 'table', parameters: { id: '1' } },
 	'GET /api/v1/sources': table,
+	'POST /api/v1/sources': { ...educator, scope: 'table:write' },
+	'PATCH /api/v1/sources/[id]': { ...educator, scope: 'table:write' },
+	'DELETE /api/v1/sources/[id]': { ...educator, scope: 'table:write' },
+	'GET /api/v1/table.xlsx': table,
 	'GET /api/v1/sources/[id]': { access: 'table', parameters: { id: 'weine-1969' } },
 	'POST /api/v1/pool': table,
 	'POST /api/v1/confluence': table,

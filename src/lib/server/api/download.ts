@@ -3,10 +3,12 @@ import { serverDatabase } from '../db/server';
 import { checkEntryFilters } from '../table/entryFilters';
 import { CITATION_FILES, cite } from '../table/citations';
 import { citationsOf } from '../table/sources';
-import { LICENCE_NOTE, publishedRevision, tableCsv, tableJson } from '../table/wholeTable';
+import { LICENCE_NOTE, publishedRevision, tableCsv, tableJson, tableSpreadsheet } from '../table/wholeTable';
 
 /** Sources cited between two looks at what else waits: a bibliography of thousands must hold nobody up. */
 const CHUNK_SOURCES = 50;
+
+const XLSX_TYPE = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
 
 /** Text that is made while it is sent: the next piece when the reader has room for it. */
 function streamed(pieces: AsyncGenerator<string, void>, headers: Record<string, string>): Response {
@@ -31,7 +33,10 @@ export const fileName = (name: string, ending: string) => `${name.replace(/[^\w.
  * The published table, or what filters leave of it, as a file to keep. Its name, and headers, say of which revision and day it is.
  * @throws Problem 422 for a filter that names something the table does not have
  */
-export async function downloadTable(filters: EntryFilters, ending: 'csv' | 'json'): Promise<Response> {
+export async function downloadTable(
+	filters: EntryFilters,
+	ending: 'csv' | 'json' | 'xlsx'
+): Promise<Response> {
 	const db = await serverDatabase();
 	await checkEntryFilters(db, filters);
 	const published = await publishedRevision();
@@ -43,6 +48,10 @@ export async function downloadTable(filters: EntryFilters, ending: 'csv' | 'json
 		'x-table-revision': String(published.revision),
 		'x-table-licence': LICENCE_NOTE
 	};
+	if (ending === 'xlsx') {
+		const bytes = await tableSpreadsheet(db, filters, published.revision);
+		return new Response(new Uint8Array(bytes), { headers: { ...headers, 'content-type': XLSX_TYPE } });
+	}
 	return ending === 'csv'
 		? streamed(tableCsv(db, filters, published.revision), {
 				...headers,

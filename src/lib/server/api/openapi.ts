@@ -10,9 +10,11 @@ const REASONS: Record<number, string> = {
 	401: 'No account, or a token that is not known or has ended',
 	403: 'The roles of the person, or the scopes of the token, do not allow this',
 	404: 'Unknown tooth, root or id',
+	409: 'Somebody has changed it meanwhile, or it is not in the state for this',
 	413: 'The body is too large',
 	415: 'The body is not application/json',
 	422: 'A value is missing or out of range; errors name the field',
+	428: 'If-Match is missing',
 	429: 'Too many requests; Retry-After says when to try again',
 	503: 'Too many calculations are waiting, or the database does not answer'
 };
@@ -73,7 +75,7 @@ export function describeOperations() {
 			method,
 			path,
 			summary,
-			parameters: [...pathParameters(operation), ...queryParameters(operation.query)].map((parameter) => ({
+			parameters: parametersOf(operation).map((parameter) => ({
 				name: String(parameter.name),
 				in: String(parameter.in),
 				required: parameter.required === true,
@@ -125,7 +127,7 @@ function describe(operation: Operation): Json {
 		summary: operation.summary,
 		description: accessInWords(operation),
 		security: securityOf(operation),
-		parameters: [...pathParameters(operation), ...queryParameters(operation.query)],
+		parameters: parametersOf(operation),
 		...(operation.body && {
 			requestBody: {
 				required: true,
@@ -162,6 +164,21 @@ function securityOf({ access }: Operation): Json[] {
 	if (!access) return [{}, { session: [] }, { token: ['table:read'] }];
 	return [{ session: [] }, { token: [access.scope] }];
 }
+
+const IF_MATCH: Json = {
+	name: 'If-Match',
+	in: 'header',
+	required: true,
+	description: 'Number of the revision that is edited, in quotes, as the ETag gives it',
+	example: '"1"',
+	schema: { type: 'string' }
+};
+
+const parametersOf = (operation: Operation): Json[] => [
+	...pathParameters(operation),
+	...queryParameters(operation.query),
+	...(operation.ifMatch ? [IF_MATCH] : [])
+];
 
 function pathParameters(operation: Operation): Json[] {
 	return [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => {
