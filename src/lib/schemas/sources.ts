@@ -117,15 +117,8 @@ export const sourceChangeSchema = z
 		{ message: 'Change the citation, the retraction or the appraisal.' }
 	);
 
-const sourceRevisionSchema = z.object({
-	number: z.number().int(),
-	at: z.iso.datetime(),
-	who: z.string(),
-	why: z.string(),
-	before: z.unknown(),
-	after: z.unknown()
-});
-export type SourceRevisionDto = z.infer<typeof sourceRevisionSchema>;
+export const sourceRemovalSchema = z.strictObject({ why: reasonSchema });
+export const removedSourceSchema = z.object({ removed: z.string() });
 
 /** A source with what educators keep about it. */
 export const keptSourceSchema = sourceSchema.extend({

@@ -1,3 +1,4 @@
+import { backUpDaily } from './backup/daily';
 import { environment } from './config';
 import { closeDatabase, database } from './db';
 import { estimator, stopEstimator } from './inference/estimator';
@@ -26,6 +27,7 @@ export async function startUp(): Promise<void> {
 	held.watersmeetStops = true;
 	process.once('sveltekit:shutdown' as 'exit', () => void shutDown());
 	keepHouse();
+	backUpDaily();
 	await startMailer();
 	await offerSetUp();
 	// Nobody waits for this: it starts the worker, so that the first visitor does not pay for it, and has the table's coverage ready.

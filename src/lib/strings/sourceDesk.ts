@@ -80,6 +80,8 @@ export const sourceDesk = {
 	duplicateChoose: 'Open the one that is there, or say that this is another.',
 	stale:
 		'Somebody has changed this source since you opened it. What stands now is shown beside what you typed; saving again replaces it.',
+	staleApi: (revision: number) =>
+		`Somebody has changed this source meanwhile; its revision is ${revision}. Read it again and send the change with that.`,
 	staleNow: 'Stands now',
 	retraction: 'Retraction',
 	retracted: (at: string) => `Marked as retracted on ${at}. Its entries are in no estimate.`,

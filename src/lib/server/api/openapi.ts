@@ -172,7 +172,7 @@ const IF_MATCH: Json = {
 	name: 'If-Match',
 	in: 'header',
 	required: true,
-	description: 'Number of the revision that is edited, in quotes, as the ETag of the entry gives it',
+	description: 'Number of the revision that is edited, in quotes, as the ETag gives it',
 	example: '"1"',
 	schema: { type: 'string' }
 };

@@ -23,13 +23,19 @@ import {
 import { poolRequestSchema, poolResponseSchema } from '$lib/schemas/pool';
 import { searchQuerySchema, searchSchema } from '$lib/schemas/search';
 import {
+	keptSourceSchema,
+	newSourceSchema,
+	removedSourceSchema,
+	sourceChangeSchema,
+	sourceRemovalSchema
+} from '$lib/schemas/sources';
+import {
 	bibliographyQuerySchema,
 	entriesQuerySchema,
 	entriesSchema,
 	entryWithRevisionsSchema,
 	healthSchema,
 	sourceQuerySchema,
-	sourceSchema,
 	sourcesQuerySchema,
 	sourcesSchema,
 	tableQuerySchema,
@@ -65,6 +71,10 @@ export interface Operation {
 	 */
 	access?: 'everybody' | { scope: Scope; role?: Role };
 }
+
+const XLSX_TYPE = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
+/** Who keeps the table. */
+const EDUCATOR = { scope: 'table:write', role: 'educator' } as const;
 
 const slug = { tooth: 'maxillary-first-molar', root: 'MB' };
 
@@ -225,7 +235,7 @@ export const operations: Operation[] = [
 		exampleParameters: { id: 'weine-1969' },
 		summary: 'One source with its CSL-JSON, or its citation in a format',
 		query: sourceQuerySchema,
-		response: sourceSchema,
+		response: keptSourceSchema,
 		formats: [
 			'text/plain',
 			'application/x-bibtex',
@@ -280,6 +290,63 @@ export const operations: Operation[] = [
 		query: tableQuerySchema,
 		response: wholeTableSchema,
 		failures: [422]
+	},
+	{
+		method: 'get',
+		path: '/table.xlsx',
+		id: 'downloadTableSpreadsheet',
+		summary: 'The same as a spreadsheet',
+		query: tableQuerySchema,
+		formats: [XLSX_TYPE],
+		failures: [422]
+	},
+	{
+		method: 'post',
+		path: '/sources',
+		id: 'addSource',
+		summary: 'Adds a source; 409 names the ones it may be a duplicate of',
+		body: newSourceSchema,
+		example: {
+			csl: {
+				type: 'article-journal',
+				title: 'Canals of an invented population',
+				author: [{ family: 'Vandermeer', given: 'Ilse' }],
+				issued: { 'date-parts': [[2021]] },
+				'container-title': 'Journal of Invented Anatomy'
+			},
+			why: 'Found in a hand search.',
+			evenIfDuplicate: false
+		},
+		response: keptSourceSchema,
+		failures: [400, 409, 413, 415, 422],
+		access: EDUCATOR
+	},
+	{
+		method: 'patch',
+		path: '/sources/{id}',
+		id: 'changeSource',
+		exampleParameters: { id: 'weine-1969' },
+		summary:
+			'Changes the citation, the retraction or the appraisal of a source; each change is a revision of it',
+		body: sourceChangeSchema,
+		example: { retraction: { reason: 'Retracted by the journal.' }, why: 'The notice was seen.' },
+		response: keptSourceSchema,
+		failures: [400, 404, 409, 413, 415, 422, 428],
+		ifMatch: true,
+		access: EDUCATOR
+	},
+	{
+		method: 'delete',
+		path: '/sources/{id}',
+		id: 'removeSource',
+		exampleParameters: { id: 'weine-1969' },
+		summary: 'Removes a source that nothing rests on; its revisions stay',
+		body: sourceRemovalSchema,
+		example: { why: 'Added by mistake.' },
+		response: removedSourceSchema,
+		failures: [400, 404, 409, 413, 415, 422, 428],
+		ifMatch: true,
+		access: EDUCATOR
 	},
 	{
 		method: 'get',
