@@ -166,7 +166,7 @@ test('an entry is typed by keyboard, returned, mended, published by another; the
 	await expect(page.getByText('You have written in this entry')).toBeVisible();
 
 	await open(other, address);
-	await expect(other.locator('#effect')).toContainText(/Inside|Outside|no other sample/);
+	await expect(other.locator('section[aria-labelledby=effect]')).toContainText(/Inside|Outside|no other sample/);
 	await other.getByRole('button', { name: 'Publish' }).click();
 	await other.waitForURL('**/table/revisions**');
 	const revision = other.locator('#revision-2');
