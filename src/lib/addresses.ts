@@ -32,3 +32,8 @@ export function featureAddress(tooth: string, root: string | undefined, feature:
 export function countryAddress(code: string): string {
 	return `/table?country=${code}`;
 }
+
+/** Address of the page on which educators keep a source. */
+export function deskSourceAddress(id: string): string {
+	return `/desk/sources/${encodeURIComponent(id)}`;
+}

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { POOLED_METHODS } from './terms';
+import { APPRAISAL_FILTERS, POOLED_METHODS } from './terms';
 
 export const probabilitySchema = z.number().min(0).max(1).describe('A probability, 0 to 1, unrounded');
 
@@ -40,6 +40,13 @@ const countrySchema = z
 	.regex(/^[A-Z]{3}$/, 'Give a country as its three capital letters (ISO 3166 alpha-3), such as BRA.');
 const sourceIdSchema = z.string().min(1, 'Give a source id.').max(200, 'A source id is shorter.');
 
+const appraisalSchema = z
+	.enum(APPRAISAL_FILTERS, `The appraisal must be one of ${APPRAISAL_FILTERS.join(', ')}.`)
+	.optional()
+	.describe(
+		'Only appraised sources (any), or those whose appraisal leaves at most some, or only low, concern'
+	);
+
 const yearsInOrder = (filters: { yearFrom?: number; yearTo?: number }) =>
 	filters.yearFrom === undefined || filters.yearTo === undefined || filters.yearFrom <= filters.yearTo;
 const YEARS_MESSAGE = { path: ['yearTo'], message: 'The last year must not lie before the first.' };
@@ -52,6 +59,7 @@ export const filtersSchema = z
 		yearFrom: year(z.number(YEAR_MESSAGE)),
 		yearTo: year(z.number(YEAR_MESSAGE)),
 		minTotal: total(z.number(TOTAL_MESSAGE)),
+		appraisal: appraisalSchema,
 		exclude: z.array(sourceIdSchema).max(500).optional()
 	})
 	.refine(yearsInOrder, YEARS_MESSAGE)
@@ -65,6 +73,7 @@ export const filtersQuerySchema = z
 		yearFrom: year(z.coerce.number(YEAR_MESSAGE)),
 		yearTo: year(z.coerce.number(YEAR_MESSAGE)),
 		minTotal: total(z.coerce.number(TOTAL_MESSAGE)),
+		appraisal: appraisalSchema,
 		exclude: z.array(sourceIdSchema).max(500).optional()
 	})
 	.refine(yearsInOrder, YEARS_MESSAGE);

@@ -72,7 +72,15 @@ export const SOURCE_SORTS = ['id', 'author', 'title', 'year', 'entries'] as cons
 export const ENTRY_FILTERS = ['tooth', 'root', 'measure', 'method', 'country', 'source', 'q'] as const;
 
 /** Names of the filters in an address. The lists among them may repeat. */
-export const FILTER_FIELDS = ['method', 'country', 'yearFrom', 'yearTo', 'minTotal', 'exclude'] as const;
+export const FILTER_FIELDS = [
+	'method',
+	'country',
+	'yearFrom',
+	'yearTo',
+	'minTotal',
+	'exclude',
+	'appraisal'
+] as const;
 
 /** The tests that can tell whether two canals join, in the order answers list them. */
 export const TESTS = [

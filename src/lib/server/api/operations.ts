@@ -78,9 +78,6 @@ const EDUCATOR = { scope: 'table:write', role: 'educator' } as const;
 
 const slug = { tooth: 'maxillary-first-molar', root: 'MB' };
 
-/** Who keeps the table. */
-const EDUCATOR = { role: 'educator', scope: 'table:write' } as const;
-
 /** Every operation of version 1, in the order the document lists them. */
 export const operations: Operation[] = [
 	{

@@ -34,7 +34,8 @@ export function canonical(filters: Filters): Filters {
 		yearFrom: filters.yearFrom,
 		yearTo: filters.yearTo,
 		minTotal: filters.minTotal,
-		exclude: list(filters.exclude)
+		exclude: list(filters.exclude),
+		appraisal: filters.appraisal
 	};
 	return Object.fromEntries(Object.entries(all).filter(([, value]) => value !== undefined));
 }

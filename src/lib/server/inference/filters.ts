@@ -1,4 +1,5 @@
 /** Filters of an estimate applied to samples, then combined countries applied to what is left. Pure. */
+import { passesAppraisal } from '$lib/schemas/appraisal';
 import { countryMatches, isCombined, replaces } from './countries';
 import type { Sample } from './samples';
 import type { RootTable } from './tableIndex';
@@ -43,7 +44,7 @@ export function filteredOut(
 	source: SourceFacts | undefined,
 	filters: Filters
 ): string | null {
-	const { methods, countries, yearFrom, yearTo, minTotal, exclude } = filters;
+	const { methods, countries, yearFrom, yearTo, minTotal, exclude, appraisal } = filters;
 	const year = source?.year ?? null;
 	const left = (what: string) => `Left out by your filter (${what}).`;
 	if (exclude?.includes(figure.source)) return left('source');
@@ -53,6 +54,8 @@ export function filteredOut(
 	if (yearTo !== undefined && (year === null || year > yearTo)) return left('year');
 	if (minTotal !== undefined && figure.total !== null && figure.total < minTotal)
 		return left('size of the sample');
+	if (appraisal !== undefined && !passesAppraisal(source?.appraisal ?? null, appraisal))
+		return left('appraisal');
 	return null;
 }
 

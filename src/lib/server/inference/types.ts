@@ -3,6 +3,7 @@
  * Nothing here imports the database, kit or the DOM.
  */
 import type { Leaf } from '$lib/anatomy/sequence';
+import type { AppraisalGrade } from '$lib/schemas/terms';
 
 /** The nine yes/no questions of the tree, in order. */
 export const QUESTION_IDS = ['q1', 'q2', 'q3', 'q4', 'q5', 'q6', 'q7', 'q8', 'q9'] as const;
@@ -80,6 +81,8 @@ export interface SourceFacts {
 	citable: boolean;
 	year: number | null;
 	retracted: boolean;
+	/** Concern that its appraisal leaves; null or absent where it has none. */
+	appraisal?: AppraisalGrade | null;
 }
 
 /** Filters of an estimate; an absent field does not filter. */
@@ -90,6 +93,8 @@ export interface Filters {
 	yearTo?: number;
 	minTotal?: number;
 	exclude?: string[];
+	/** Only sources with an appraisal, or with one that leaves at most this concern. */
+	appraisal?: 'any' | AppraisalGrade;
 }
 
 /** A study of a question, with where it comes from. */

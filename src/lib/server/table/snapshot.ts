@@ -29,8 +29,11 @@ export async function readSnapshot(db: Sequelize): Promise<TableSnapshot> {
 		WHERE entry.state = 'published' ORDER BY entry.id, figure.position`,
 		{ type: QueryTypes.SELECT }
 	);
-	const sources = await db.query<{ id: string; citable: number; year: number | null; retracted: number }>(
-		'SELECT id, citable, year, retracted FROM source ORDER BY id',
+	const sources = await db.query<
+		Omit<SourceFacts, 'citable' | 'retracted'> & { citable: number; retracted: number }
+	>(
+		`SELECT source.id, citable, year, retracted, source_appraisal.grade AS appraisal
+			FROM source LEFT JOIN source_appraisal ON source_appraisal.source_id = source.id ORDER BY source.id`,
 		{ type: QueryTypes.SELECT }
 	);
 	return {
