@@ -131,7 +131,7 @@ test('a token opens the API only, and of it what its scopes and its owner allow'
 test('what belongs to others is not there', async () => {
 	const { administrator, educator, student } = people;
 	const devices = await (await educator.ask('/account/devices')).text();
-	const others = await new Caller(server.origin);
+	const others = new Caller(server.origin);
 	await others.send('/sign-in?/password', {
 		email: 'educator@example.org',
 		password: 'two rivers become one'

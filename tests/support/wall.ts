@@ -1,7 +1,7 @@
 import type { Role, Scope } from '../../src/lib/schemas/terms.ts';
 
 /** Who may use a route. */
-export type Access =
+type Access =
 	/** Everybody, always. */
 	| 'everybody'
 	/** Everybody, unless an administrator has closed the table; then people with an account. */

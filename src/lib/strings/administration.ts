@@ -1,4 +1,4 @@
-import type { AuditAction, MailKind, MailState } from '$lib/schemas/terms';
+import type { MailKind, MailState } from '$lib/schemas/terms';
 
 /** Words of the administrator's pages. */
 export const administration = {
@@ -159,4 +159,4 @@ export const mailStates: Record<MailState, string> = {
 };
 
 /** An action of the audit log as a sentence begins. */
-export const actionName = (action: AuditAction | string): string => action[0].toUpperCase() + action.slice(1);
+export const actionName = (action: string): string => action[0].toUpperCase() + action.slice(1);

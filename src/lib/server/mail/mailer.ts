@@ -5,7 +5,7 @@ import { mailDelivery, type Deliver } from './transport';
 /** The queue is looked at again after this at the latest: the clock may have been set meanwhile. */
 const LONGEST_SLEEP_MS = 60_000;
 
-/** Sends what is in the queue, when it is due, until it is stopped. One message at a time. */
+/** Sends what is in the queue, when it is due, until it is stopped. One message at a time. @internal for its test */
 export class Mailer {
 	private running: Promise<void> | null = null;
 	private again = false;
@@ -37,7 +37,7 @@ export class Mailer {
 	}
 
 	private async run(): Promise<void> {
-		let next: string | null = null;
+		let next: string | null;
 		do {
 			this.again = false;
 			try {

@@ -9,7 +9,7 @@ const PAGE = 50;
 const KEPT_MS = 90 * 86_400_000;
 
 /** A mail as an administrator sees it: never what it says, since it may hold a link. */
-export interface MailDto {
+interface MailDto {
 	id: number;
 	kind: MailKind;
 	to: string;

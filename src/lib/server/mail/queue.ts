@@ -110,7 +110,7 @@ function afterFailure(mail: Mail, error: unknown) {
 	};
 }
 
-/** How long after so many failures a message is tried again. */
+/** How long after so many failures a message is tried again. @internal for its test */
 export const waitMs = (attempts: number): number =>
 	Math.min(environment.MAIL_RETRY_SECONDS * 1000 * 2 ** (attempts - 1), LONGEST_WAIT_MS);
 

@@ -7,7 +7,7 @@ import type { Rendered } from './render';
 const CONNECT_TIMEOUT_MS = 10_000;
 const SILENCE_TIMEOUT_MS = 20_000;
 
-/** A message with its addresses. The id stays the same over all attempts, so that a server that got it twice can tell. */
+/** A message with its addresses. The id stays the same over all attempts, so that a server that got it twice can tell. @internal for its test */
 export interface Outgoing extends Rendered {
 	to: string;
 	messageId: string;
@@ -40,7 +40,7 @@ export function mailDelivery(): Deliver | null {
 		: intoFolder(path.join(environment.DATA_DIR, 'outbox'));
 }
 
-/** Delivery over SMTP; the connection is encrypted where the server offers it, and always with smtps. */
+/** Delivery over SMTP; the connection is encrypted where the server offers it, and always with smtps. @internal for its test */
 export function overSmtp(url: string, from = environment.MAIL_FROM): Deliver {
 	const { hostname, port, protocol, username, password } = new URL(url);
 	const transport = createTransport({
@@ -59,7 +59,7 @@ export function overSmtp(url: string, from = environment.MAIL_FROM): Deliver {
 	};
 }
 
-/** The local fake: each message becomes a file that any mail program opens. */
+/** The local fake: each message becomes a file that any mail program opens. @internal for its test */
 export function intoFolder(folder: string, from = environment.MAIL_FROM): Deliver {
 	const transport = createTransport({ streamTransport: true, buffer: true });
 	return async (message) => {

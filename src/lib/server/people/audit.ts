@@ -9,7 +9,7 @@ import { now } from './secrets';
 const LENGTH = 500;
 
 /** Who did something. */
-export interface Actor {
+interface Actor {
 	id: string | null;
 	name: string;
 }

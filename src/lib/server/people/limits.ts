@@ -3,6 +3,8 @@ import { RateLimiterMemory, RateLimiterRes } from 'rate-limiter-flexible';
 /**
  * Counts attempts and says how long to wait once there were too many. It slows guessing down and locks nobody out: the count is kept in
  * memory, forgets after its window, and what belongs to one person's own browser is counted apart from what strangers try.
+ *
+ * @internal for its test
  */
 export class AttemptLimit {
 	private readonly limiter: RateLimiterMemory;

@@ -6,6 +6,8 @@ import { PASSWORD_LEAST, PASSWORD_MOST } from '$lib/schemas/terms';
  * argon2id with 19 MiB of memory, two passes, one lane: the first choice of OWASP's Password Storage Cheat Sheet
  * (cheatsheetseries.owasp.org, "Use Argon2id with a minimum configuration of 19 MiB of memory, an iteration count of 2, and 1 degree of
  * parallelism"). One lane, so that many sign-ins at once do not fight for the machine's cores.
+ *
+ * @internal for its test
  */
 export const HASHING = {
 	// Algorithm.Argon2id: the package's enum has no value at run time.
