@@ -161,12 +161,14 @@ test('an entry is typed by keyboard, returned, mended, published by another; the
 	await page.locator('#figure-count-1').fill('1300');
 	await page.locator('#figure-percent-1').fill('');
 	await page.getByRole('button', { name: 'Save draft' }).click();
-	await expect(page.getByRole('status')).toBeVisible();
+	await expect(page.getByText('Done.')).toBeVisible();
 	await page.getByRole('button', { name: 'Ask for review' }).click();
 	await expect(page.getByText('You have written in this entry')).toBeVisible();
 
 	await open(other, address);
-	await expect(other.locator('section[aria-labelledby=effect]')).toContainText(/Inside|Outside|no other sample/);
+	await expect(other.locator('section[aria-labelledby=effect]')).toContainText(
+		/Inside|Outside|no other sample/
+	);
 	await other.getByRole('button', { name: 'Publish' }).click();
 	await other.waitForURL('**/table/revisions**');
 	const revision = other.locator('#revision-2');
@@ -196,7 +198,7 @@ test('an entry is typed by keyboard, returned, mended, published by another; the
 	await open(other, address);
 	await page.locator('#total').fill('2010');
 	await page.getByRole('button', { name: 'Save draft' }).click();
-	await expect(page.getByRole('status')).toBeVisible();
+	await expect(page.getByText('Done.')).toBeVisible();
 	await other.locator('#country').fill('LAO');
 	await other.locator('#total').fill('2020');
 	await other.getByRole('button', { name: 'Save draft' }).click();

@@ -90,6 +90,7 @@ export const account = {
 export const menu = {
 	signIn: 'Sign in',
 	account: 'My account',
+	desk: 'Evidence desk',
 	administration: 'Administration',
 	signOut: 'Sign out',
 	label: (name: string) => `Menu of ${name}`

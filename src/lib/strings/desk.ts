@@ -4,6 +4,7 @@ export const desk = {
 	nothing: 'nothing',
 	noAction: 'There is no such action.',
 	stale: (who: string) => `${who} has saved this meanwhile. Compare the two versions and choose.`,
+	moved: (who: string) => `${who} has moved this on meanwhile. Look at it as it stands now, and try again.`,
 	staleAt: (yours: string, theirs: string) =>
 		`Yours: ${yours || 'empty'}. Saved meanwhile: ${theirs || 'empty'}.`,
 	hindrances: {

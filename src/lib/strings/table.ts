@@ -3,6 +3,8 @@ import { count } from './format';
 
 /** Words of the table of entries and of an entry's page. */
 export const table = {
+	record: 'Record of the table: what changed, who checked it',
+	editAtDesk: 'Work on it at the desk',
 	title: 'The literature table',
 	lead: 'Every published entry: what one source counted in one sample, with its place in the source. The estimates are pooled from these.',
 	find: {

@@ -10,7 +10,7 @@ const SMALLEST_POINTS = 0.05;
 /** How far a probability moved, in percentage points with its sign; null where it did not at the digits shown. */
 export function movedBy(before: number, after: number): string | null {
 	const moved = 100 * (after - before);
-	return Math.abs(moved) < SMALLEST_POINTS ? null : points.format(moved);
+	return Math.abs(moved) < SMALLEST_POINTS ? null : points.format(moved).replace('-', '−');
 }
 
 /** A fate in words. */

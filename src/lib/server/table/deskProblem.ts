@@ -22,7 +22,7 @@ export class StaleEdit<Content = EntryContent> extends Problem {
 	) {
 		super(
 			409,
-			words.stale(who),
+			clashes.length > 0 ? words.stale(who) : words.moved(who),
 			clashes.map(({ part, yours, theirs: other }) => ({
 				path: part,
 				message: words.staleAt(yours ?? words.nothing, other ?? words.nothing)
