@@ -1,4 +1,3 @@
-import type { ToothId } from '$lib/anatomy/teeth';
 import { toothOf } from '$lib/anatomy/teeth';
 import type { ExpectationDto } from '$lib/schemas/expectation';
 import type { FeatureDto } from '$lib/schemas/teeth';
@@ -86,7 +85,7 @@ export function lookFor(
 
 /** Names of features one would ask about in this tooth and of which the table has no sample. */
 export function featuresWithoutEvidence(tooth: string, features: readonly FeatureDto[]): string[] {
-	const known = toothOf(tooth as ToothId);
+	const known = toothOf(tooth);
 	const asked = (known && ASKED[known.arch][known.kind]) ?? [];
 	return asked.filter((id) => !features.some((feature) => feature.id === id)).map(featureName);
 }
