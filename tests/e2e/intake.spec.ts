@@ -161,7 +161,7 @@ test('uploads that are no tables get a sentence', async ({ page }) => {
 	const send = async (name: string, bytes: Buffer) => {
 		const response = await page.request.post(`${server.origin}/desk/import?/upload`, {
 			multipart: { file: { name, mimeType: 'text/csv', buffer: bytes } },
-			headers: { origin: server.origin },
+			headers: { origin: server.origin, accept: 'text/html' },
 			maxRedirects: 0
 		});
 		return { status: response.status(), text: await response.text() };

@@ -27,7 +27,7 @@ interface Person {
 }
 
 /** What stands before an import is written. */
-export interface Preview extends Omit<CheckedRows, 'entries'> {
+interface Preview extends Omit<CheckedRows, 'entries'> {
 	/** Entries that would be new. */
 	fresh: number;
 	/** Entries the table has just so: left out. */

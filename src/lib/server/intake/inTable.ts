@@ -7,7 +7,7 @@ import { entryKey, type PlannedEntry } from './checkRows';
 const CHUNK_SOURCES = 40;
 
 /** A planned entry that stands in the table with other figures. */
-export interface Clash {
+interface Clash {
 	planned: PlannedEntry;
 	entry: number;
 	/** It is on the desk and not in the table yet. */

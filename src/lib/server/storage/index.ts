@@ -4,7 +4,7 @@ import { diskStore } from './disk';
 import type { Store } from './store';
 
 /** Folder of uploads below DATA_DIR; backups take it whole. */
-export const UPLOADS_FOLDER = 'uploads';
+const UPLOADS_FOLDER = 'uploads';
 
 /** The storage of this server. Asked for anew each time: tests move DATA_DIR. */
 export const storage = (): Store => diskStore(path.join(environment.DATA_DIR, UPLOADS_FOLDER));

@@ -21,7 +21,7 @@ const SAME: readonly (readonly [keyof SourceFields, string])[] = [
 ];
 
 /** Authors as the form shows them: one a line, `Family, Given`; a society by its name in braces. */
-export function authorLines(authors: readonly Name[] = []): string {
+function authorLines(authors: readonly Name[] = []): string {
 	return authors
 		.map(({ family, given, literal }) => {
 			if (literal !== undefined) return `{${literal}}`;
@@ -32,7 +32,7 @@ export function authorLines(authors: readonly Name[] = []): string {
 }
 
 /** Authors from the form's lines. A line without a comma is a family name alone; one in braces is a society. */
-export function authorsOf(lines: string): Name[] {
+function authorsOf(lines: string): Name[] {
 	return lines
 		.split(/\r?\n/)
 		.map((line) => line.trim())

@@ -85,7 +85,7 @@ async function newSourceId(csl: CslSource, transaction: Transaction): Promise<st
 }
 
 /** Number of the newest revision of a source; 0 before anybody changed it. */
-export async function sourceRevisionNumber(id: string, transaction?: Transaction): Promise<number> {
+async function sourceRevisionNumber(id: string, transaction?: Transaction): Promise<number> {
 	const where = { sourceId: id };
 	return (await SourceRevision.max<number | null, SourceRevision>('number', { where, transaction })) ?? 0;
 }
