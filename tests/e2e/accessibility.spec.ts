@@ -28,6 +28,13 @@ const overflowing = (page: Page) =>
 			);
 	}, NARROWEST_PX);
 
+/** Waits until the colours of one scheme have turned into those of the other. */
+const settled = (page: Page) =>
+	page.evaluate(async () => {
+		await new Promise((resolve) => requestAnimationFrame(() => requestAnimationFrame(resolve)));
+		await Promise.allSettled(document.getAnimations().map(({ finished }) => finished));
+	});
+
 // A page that is not there is answered with 404, which the console reports.
 test.use({ expectedMessages: [/status of 404/] });
 
@@ -46,6 +53,7 @@ for (const [name, address] of Object.entries(PAGES)) {
 			await page.setViewportSize({ width, height: 900 });
 			for (const colorScheme of ['light', 'dark'] as const) {
 				await page.emulateMedia({ colorScheme });
+				await settled(page);
 				const { violations, passes } = await new AxeBuilder({ page }).withTags(TAGS).analyze();
 				const found = violations.map(
 					({ id, nodes }) =>

@@ -17,6 +17,7 @@ interface Parameter {
 interface Operation {
 	operationId: string;
 	parameters: Parameter[];
+	security?: Record<string, string[]>[];
 	requestBody?: { content: { 'application/json': { example: unknown } } };
 	responses: Record<string, { content: Record<string, { schema: AnySchema }> }>;
 }
@@ -64,6 +65,8 @@ test('every operation answers, and as the document says', async ({ request }) =>
 	const asked: string[] = [];
 	for (const [path, methods] of Object.entries(document.paths)) {
 		for (const [method, operation] of Object.entries(methods)) {
+			// Who may ask the others, and that nobody else can, the wall tests.
+			if (operation.security?.every((ways) => Object.keys(ways).length > 0)) continue;
 			const address = path.replace(/\{(\w+)\}/g, (_, name: string) => {
 				const example = operation.parameters.find((one) => one.in === 'path' && one.name === name)?.example;
 				return encodeURIComponent(String(example));
@@ -73,10 +76,16 @@ test('every operation answers, and as the document says', async ({ request }) =>
 				...(operation.requestBody && { data: operation.requestBody.content['application/json'].example })
 			});
 			expect(response.status(), `${method} ${address}`).toBe(200);
-			expect(response.headers()['content-type']).toContain('application/json');
-			const { schema } = operation.responses['200'].content['application/json'];
-			expect(faults(schema, await response.json()), `${method} ${address}`).toBeNull();
+			const { content } = operation.responses['200'];
+			const type = response.headers()['content-type'].split(';')[0];
+			expect(Object.keys(content), `${method} ${address}`).toContain(type);
 			asked.push(operation.operationId);
+			if (type !== 'application/json') {
+				expect((await response.body()).length).toBeGreaterThan(100);
+				continue;
+			}
+			const { schema } = content[type];
+			expect(faults(schema, await response.json()), `${method} ${address}`).toBeNull();
 		}
 	}
 	expect(asked).toContain('confluence');
@@ -170,7 +179,12 @@ test('the filters of the entries leave what they say, alone and together', async
 	const { items: all } = await walk<Entry>(request, 'entries', 'limit=200');
 	const matching = (wanted: Partial<Entry>) =>
 		all.filter((entry) =>
-			Object.entries(wanted).every(([name, value]) => entry[name as keyof Entry] === value)
+			Object.entries(wanted).every(([name, value]) =>
+				// A sample of several countries is found under each.
+				name === 'country'
+					? `+${entry.country}+`.includes(`+${value}+`)
+					: entry[name as keyof Entry] === value
+			)
 		);
 	const queries: Record<string, string>[] = [
 		{ tooth: 'maxillary-first-molar' },
@@ -286,5 +300,5 @@ test('a root without a sample says so and advises nothing', async ({ page, reque
 	await expect(page.getByRole('main')).toContainText('No evidence');
 	await page.goto(`${NO_EVIDENCE}/join?canals=2&cone-mark=positive`);
 	await expect(page.getByRole('main')).toContainText('No evidence');
-	await expect(page.getByRole('region', { name: 'What it means' })).toContainText('No advice');
+	await expect(page.getByRole('region', { name: 'How probable it is' })).toContainText('No advice');
 });

@@ -85,7 +85,7 @@ test('tooth numbers follow the choice on every page that shows them', async ({ p
 	await page.getByRole('combobox', { name: 'Tooth numbers' }).selectOption('palmer');
 	await page.getByRole('group', { name: PREFERENCES }).getByRole('button').click();
 	await page.goto('/teeth/maxillary-first-molar');
-	await expect(page.getByText(/UR6, UL6/)).toBeVisible();
+	await expect(page.getByText('UR6, UL6', { exact: true })).toBeVisible();
 });
 
 test('preferences lead back to this site only, and keep nothing that is no choice', async ({

@@ -49,7 +49,7 @@ test('findings are entered, ordered, removed, undone and redone, and the address
 	await expect(page).toHaveURL(`${TWO}&draw=positive`);
 	const second = await figures(page);
 	expect(second).not.toBe(first);
-	await expect(page.getByRole('status').first()).toContainText('Meet and share one exit');
+	await expect(page.getByRole('main').getByRole('status').first()).toContainText('Meet and share one exit');
 	// A finding fades the sequences it speaks against: the first drawn is two separate canals.
 	expect(Number(await strength().getAttribute('stroke-opacity'))).toBeLessThan(before);
 
@@ -305,7 +305,7 @@ test.describe('without JavaScript', () => {
 		expect(query(page)).toBe(
 			'?canals=2&threshold=0.8&draw=positive&two-files=negative&cone-mark=positive&file-contact=negative'
 		);
-		expect(await order(page)).toHaveLength(4);
+		await expect.poll(() => order(page)).toHaveLength(4);
 		await page.getByText('As text for the record').click();
 		await expect(page.getByLabel('Text for the record')).toHaveValue(/1\. Draw test: positive/);
 		await expect(page.getByRole('button', { name: 'Copy the text' })).toHaveCount(0);

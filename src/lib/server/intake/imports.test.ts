@@ -5,7 +5,7 @@ import { temporaryDatabase, temporaryFolder } from '../../../../tests/support/da
 import { cslSource, literature, observation } from '../../../../tests/support/madeUpLiterature';
 import { environment } from '../config';
 import { EntryWork } from '../db/models/desk';
-import { TableImport } from '../db/models/intake';
+import type { TableImport } from '../db/models/intake';
 import { Entry, Figure, Revision, Sample, TableRevision } from '../db/models/literature';
 import { Audit } from '../db/models/people';
 import { readLiteratureFiles } from '../table/literatureFiles';
@@ -171,7 +171,7 @@ describe('a table that is exported and imported', () => {
 	it('is the same table', async () => {
 		const text = async () => {
 			let all = '';
-			for await (const piece of tableCsv(db, {}, (await TableRevision.max<number, TableRevision>('id'))!))
+			for await (const piece of tableCsv(db, {}, (await TableRevision.max<number, TableRevision>('id'))))
 				all += piece;
 			return all;
 		};

@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { zipOf } from '../../../../tests/support/zip';
 import { checkArchive, DATE_MARK, readXlsx } from './spreadsheet';
 
-const sheetOf = (rows: unknown[][]) => writeXlsxFile(rows as SheetData).toBuffer() as Promise<Buffer>;
+const sheetOf = (rows: unknown[][]) => writeXlsxFile(rows as SheetData).toBuffer();
 
 describe('a spreadsheet', () => {
 	it('is read as text, numbers as they are written, dates marked', async () => {

@@ -52,7 +52,7 @@ export async function readXlsx(bytes: Buffer): Promise<Sheet> {
 	let data: unknown[][];
 	try {
 		// Numbers come as the file writes them, and are read by us: nothing is rounded on the way.
-		data = (await readSheet(bytes, 1, { trim: false, parseNumber: (text) => text })) as unknown[][];
+		data = (await readSheet(bytes, 1, { trim: false, parseNumber: (text) => text }));
 	} catch {
 		throw new UnreadableFile(words.unreadable.brokenSheet);
 	}
@@ -68,7 +68,7 @@ function cellText(value: unknown): string {
 	if (value === null || value === undefined) return '';
 	if (value instanceof Date) return DATE_MARK + value.toISOString().slice(0, 10);
 	if (typeof value === 'boolean') return value ? 'yes' : 'no';
-	if (typeof value !== 'string') return String(value as number);
+	if (typeof value !== 'string') return String(value);
 	// Binary fractions are written with seventeen digits: 0.1 as 0.10000000000000001.
 	return /^-?\d+\.\d{15,}$/.test(value) ? String(Number(Number(value).toPrecision(15))) : value;
 }

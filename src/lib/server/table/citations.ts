@@ -143,11 +143,11 @@ function readable(record: Record<string, unknown>): CslSource {
 				['family', 'given', 'literal'].includes(key) && typeof value === 'string' && value.trim() !== ''
 		);
 		return parts.length > 0
-			? [Object.fromEntries(parts) as { family?: string; given?: string; literal?: string }]
+			? [Object.fromEntries(parts)]
 			: [];
 	});
 	if (author.length > 0) csl.author = author;
-	const year = yearOf(record as CslSource);
+	const year = yearOf(record);
 	if (year !== null) csl.issued = { 'date-parts': [[year]] };
 	return csl;
 }

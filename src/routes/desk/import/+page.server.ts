@@ -26,7 +26,7 @@ export const actions: Actions = {
 		const tooLarge = () =>
 			fail(413, {
 				...done('upload', ''),
-				errors: { file: words.unreadable.tooLarge } as Record<string, string>
+				errors: { file: words.unreadable.tooLarge }
 			});
 		if (Number(request.headers.get('content-length') ?? 0) > MOST_FILE_BYTES + FORM_ROOM_BYTES)
 			return tooLarge();

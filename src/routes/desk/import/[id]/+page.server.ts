@@ -63,7 +63,7 @@ export const actions: Actions = {
 	cancel: async (event) => {
 		const { row } = await own(event.params.id);
 		if (await cancelImport(row)) return done('start', words.cancelled);
-		return fail(409, { ...done('start', ''), errors: { '': words.tooLate } as Record<string, string> });
+		return fail(409, { ...done('start', ''), errors: { '': words.tooLate } });
 	},
 	discard: async (event) => {
 		const { row } = await own(event.params.id);
