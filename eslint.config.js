@@ -63,7 +63,14 @@ export default defineConfig(
 		rules: {
 			'@typescript-eslint/no-restricted-imports': [
 				'error',
-				{ patterns: [{ group: ['zod', '$lib/schemas/*', '!$lib/schemas/terms'], allowTypeImports: true }] }
+				{
+					patterns: [
+						{
+							group: ['zod', '$lib/schemas/*', '!$lib/schemas/terms', '!$lib/schemas/appraisal'],
+							allowTypeImports: true
+						}
+					]
+				}
 			]
 		}
 	},

@@ -15,7 +15,7 @@ import path from 'node:path';
  */
 export async function startFakeCrossref({ port = 0 } = {}) {
 	const file = path.resolve(import.meta.dirname, '../../data/demo/crossref.json');
-	const works = /** @type {Work[]} */ (JSON.parse(readFileSync(file, 'utf8')));
+	const works = readJson(file);
 	const server = createServer((request, response) => {
 		const url = new URL(request.url ?? '/', 'http://localhost');
 		/** @param {unknown} body @param {number} [status] */
@@ -46,4 +46,14 @@ export async function startFakeCrossref({ port = 0 } = {}) {
 				server.closeAllConnections();
 			})
 	};
+}
+
+/**
+ * @param {string} file
+ * @returns {Work[]}
+ */
+function readJson(file) {
+	/** @type {unknown} */
+	const value = JSON.parse(readFileSync(file, 'utf8'));
+	return /** @type {Work[]} */ (value);
 }

@@ -113,7 +113,8 @@ test('preferences that are no form are refused, not broken by', async ({ baseURL
 			headers: { origin, ...(type && { 'content-type': type }) },
 			chunks: [body]
 		});
-		expect(answer.status, type).toBe(400);
+		// Without a length it is refused before it is read.
+		expect([400, 411], type).toContain(answer.status);
 		expect(answer.headers['set-cookie'], type).toBeUndefined();
 	}
 });

@@ -26,6 +26,7 @@ export const searchQuerySchema = z.strictObject({
 		.describe('The system in which a bare number is read first and tooth numbers are written')
 });
 
+/** @internal for its test */
 export const searchHitSchema = z.object({
 	kind: z.enum(SEARCH_KINDS),
 	title: z.string(),

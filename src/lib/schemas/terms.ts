@@ -161,6 +161,7 @@ export const AUDIT_ACTIONS = [
 ] as const;
 export type AuditAction = (typeof AUDIT_ACTIONS)[number];
 
+/** @internal for its test */
 export const MAIL_KINDS = [
 	'invitation',
 	'reset',
@@ -176,8 +177,7 @@ export const MAIL_STATES = ['waiting', 'sending', 'sent', 'failed', 'dropped'] a
 export type MailState = (typeof MAIL_STATES)[number];
 
 /** Concern that an appraisal of a source leaves, the least first. */
-export const APPRAISAL_GRADES = ['low', 'some', 'high'] as const;
-export type AppraisalGrade = (typeof APPRAISAL_GRADES)[number];
+export type AppraisalGrade = 'low' | 'some' | 'high';
 /** Which appraisals a filter lets pass: any at all, or those that leave at most this concern. */
 export const APPRAISAL_FILTERS = ['any', 'some', 'low'] as const;
 export const APPRAISAL_ANSWERS = ['yes', 'partly', 'no', 'unclear'] as const;

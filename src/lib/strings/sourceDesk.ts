@@ -1,5 +1,3 @@
-import type { DoiAnswer } from '$lib/server/table/doi';
-
 /** Words of keeping sources. */
 export const sourceDesk = {
 	record: (id: string, why: string) => `Source ${id}: ${why}`,
@@ -25,7 +23,7 @@ export const sourceDesk = {
 		'timed out': 'Crossref did not answer in time. Try again, or paste the citation.',
 		unreachable: 'Crossref cannot be reached at the moment. Try again later, or paste the citation.',
 		nonsense: 'What came back is no record of this DOI. Try again later, or paste the citation.'
-	} satisfies Record<Extract<DoiAnswer, { found: false }>['reason'], string>,
+	},
 	byPaste: 'By pasting a citation',
 	pasted: 'Citation',
 	format: 'Written as',

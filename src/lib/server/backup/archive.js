@@ -47,10 +47,13 @@ export function runSql(file, sql, { bind = [], readOnly = true } = {}) {
 /**
  * @param {string} file
  * @returns {Promise<string>} SHA-256 in hex
+ * @internal for its test
  */
 export async function hashOf(file) {
 	const hash = createHash('sha256');
-	for await (const chunk of createReadStream(file)) hash.update(/** @type {Buffer} */ (chunk));
+	/** @type {AsyncIterable<Buffer>} */
+	const chunks = createReadStream(file);
+	for await (const chunk of chunks) hash.update(chunk);
 	return hash.digest('hex');
 }
 

@@ -10,7 +10,10 @@ const EVERY_MS = 3_600_000;
 const madeAt = (name: string | undefined): number =>
 	name ? Date.parse(name.replace(/^watersmeet-(.+T\d\d)-(\d\d)-(\d\d)Z\.tar\.gz$/, '$1:$2:$3Z')) : 0;
 
-/** Makes a backup if the newest is a day old, and removes those beyond BACKUP_KEEP. */
+/**
+ * Makes a backup if the newest is a day old, and removes those beyond BACKUP_KEEP.
+ * @internal for its test
+ */
 export async function backUpIfDue(now = Date.now()): Promise<string | null> {
 	const { DATA_DIR, BACKUP_DIR, BACKUP_KEEP } = environment;
 	const [newest] = await listBackups(BACKUP_DIR);

@@ -120,9 +120,9 @@ async function verify(work, knownSchema) {
  */
 async function readManifest(work) {
 	try {
-		const manifest = /** @type {Manifest} */ (
-			JSON.parse(await fs.readFile(path.join(work, MANIFEST_FILE), 'utf8'))
-		);
+		/** @type {unknown} */
+		const value = JSON.parse(await fs.readFile(path.join(work, MANIFEST_FILE), 'utf8'));
+		const manifest = /** @type {Manifest} */ (value);
 		if (manifest.format === FORMAT && Array.isArray(manifest.files)) return manifest;
 	} catch {
 		// Missing or no JSON: said below.

@@ -6,6 +6,10 @@ import { MOST_ROWS } from './limits';
 
 const bytes = (text: string) => Buffer.from(text, 'utf8');
 
+/** Control characters no table has, but for tab and line ends, and the mark of byte order. */
+const unreadable = (character: string) =>
+	character === '\ufeff' || (character < ' ' && !['\t', '\n', '\r'].includes(character));
+
 describe('the text of a file', () => {
 	// Unicode Standard, 23.8: the marks of UTF-8 and UTF-16. Windows-1252 after Unicode's CP1252.TXT: 0xE9 é, 0x80 €, 0x96 en dash.
 	it('is read as what wrote it', () => {
@@ -27,7 +31,7 @@ describe('the text of a file', () => {
 	it('whatever it is, comes back from UTF-8', () => {
 		fc.assert(
 			fc.property(fc.string({ unit: 'grapheme' }), (text) => {
-				fc.pre(!/[\u0000-\u0008\u000b\u000e-\u001f\ufeff]/.test(text));
+				fc.pre(![...text].some(unreadable));
 				expect(decodeText(bytes(text)).text).toBe(text);
 			})
 		);
@@ -59,7 +63,7 @@ describe('a CSV file', () => {
 				(rows, delimiter) => {
 					const clean = rows
 						.map((cells) =>
-							cells.map((one) => one.replace(/[\u0000-\u0008\u000b-\u000c\u000e-\u001f\ufeff]/g, ''))
+							cells.map((one) => [...one].filter((character) => !unreadable(character)).join(''))
 						)
 						.filter((cells) => cells.some((one) => one !== ''));
 					const all = [['one', 'two', 'three'], ...clean];

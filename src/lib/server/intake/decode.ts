@@ -17,6 +17,7 @@ export interface Sheet {
  * The text of bytes: by their byte order mark, else as UTF-8 if they are that without a fault, else as Windows-1252, which is what older
  * spreadsheet programs of Western Europe write.
  * @throws UnreadableFile for bytes that are no text
+ * @internal for its test
  */
 export function decodeText(bytes: Uint8Array): { text: string; encoding: Encoding } {
 	const [first, second] = bytes;
@@ -34,7 +35,10 @@ export function decodeText(bytes: Uint8Array): { text: string; encoding: Encodin
 	}
 }
 
-/** What stands between cells: whichever of comma, semicolon and tab the first line has most of, outside quotes. */
+/**
+ * What stands between cells: whichever of comma, semicolon and tab the first line has most of, outside quotes.
+ * @internal for its test
+ */
 export function delimiterOf(text: string): Delimiter {
 	const counts: Record<Delimiter, number> = { ',': 0, ';': 0, '\t': 0 };
 	let quoted = false;

@@ -171,7 +171,7 @@ describe('a table that is exported and imported', () => {
 	it('is the same table', async () => {
 		const text = async () => {
 			let all = '';
-			for await (const piece of tableCsv(db, {}, (await TableRevision.max<number, TableRevision>('id'))))
+			for await (const piece of tableCsv(db, {}, await TableRevision.max<number, TableRevision>('id')))
 				all += piece;
 			return all;
 		};

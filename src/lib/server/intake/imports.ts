@@ -90,7 +90,10 @@ export function importDto({ id, file, state, publish, at, endedAt, rows, entries
 	return { id, file, state, publish, at, endedAt, rows, entries, message, ...progressOf(id) };
 }
 
-/** How far the writing of an import is; both 0 if it is not being written. */
+/**
+ * How far the writing of an import is; both 0 if it is not being written.
+ * @internal for its test
+ */
 export function progressOf(id: string): { written: number; total: number } {
 	const running = held.watersmeetImport;
 	return running?.id === id ? { written: running.written, total: running.total } : { written: 0, total: 0 };

@@ -12,6 +12,7 @@ export const DATE_MARK = '\u0000date:';
  * Counts what an archive unpacks to while unpacking it, and stops at the limit: what its directory says of its size is the archive's own
  * word. The reader below sees the file only after this.
  * @throws UnreadableFile for too much, or no archive
+ * @internal for its test
  */
 export async function checkArchive(bytes: Buffer, most = MOST_UNPACKED_BYTES): Promise<number> {
 	let unpacked = 0;
@@ -52,7 +53,7 @@ export async function readXlsx(bytes: Buffer): Promise<Sheet> {
 	let data: unknown[][];
 	try {
 		// Numbers come as the file writes them, and are read by us: nothing is rounded on the way.
-		data = (await readSheet(bytes, 1, { trim: false, parseNumber: (text) => text }));
+		data = await readSheet(bytes, 1, { trim: false, parseNumber: (text) => text });
 	} catch {
 		throw new UnreadableFile(words.unreadable.brokenSheet);
 	}
@@ -68,7 +69,8 @@ function cellText(value: unknown): string {
 	if (value === null || value === undefined) return '';
 	if (value instanceof Date) return DATE_MARK + value.toISOString().slice(0, 10);
 	if (typeof value === 'boolean') return value ? 'yes' : 'no';
-	if (typeof value !== 'string') return String(value);
+	if (typeof value === 'number') return String(value);
+	if (typeof value !== 'string') return '';
 	// Binary fractions are written with seventeen digits: 0.1 as 0.10000000000000001.
 	return /^-?\d+\.\d{15,}$/.test(value) ? String(Number(Number(value).toPrecision(15))) : value;
 }

@@ -24,18 +24,11 @@ export async function checkUpload(bytes: Buffer): Promise<CheckedUpload | { fail
 	if (bytes.length === 0) return { failure: 'empty' };
 	if (bytes.length > MOST_ATTACHMENT_BYTES) return { failure: 'too large' };
 	const sniffed = await fileTypeFromBuffer(bytes).catch(() => undefined);
-	switch (sniffed?.mime) {
-		case 'application/pdf':
-			return isWholePdf(bytes)
-				? { bytes, type: 'application/pdf', ending: 'pdf' }
-				: { failure: 'broken PDF' };
-		case 'image/jpeg':
-		case 'image/png':
-		case 'image/webp':
-			return redrawn(bytes, sniffed.mime);
-		default:
-			return { failure: 'wrong type' };
-	}
+	const mime = sniffed?.mime;
+	if (mime === 'application/pdf')
+		return isWholePdf(bytes) ? { bytes, type: mime, ending: 'pdf' } : { failure: 'broken PDF' };
+	if (mime === 'image/jpeg' || mime === 'image/png' || mime === 'image/webp') return redrawn(bytes, mime);
+	return { failure: 'wrong type' };
 }
 
 async function redrawn(
@@ -57,6 +50,7 @@ async function redrawn(
 /**
  * Whether bytes are a PDF from its first line to its last (ISO 32000-1, 7.5: header, body, cross-reference, trailer): the header at the
  * very beginning, objects, `startxref` that points into the file, `%%EOF` at the end.
+ * @internal for its test
  */
 export function isWholePdf(bytes: Buffer): boolean {
 	if (!/^%PDF-[12]\.\d/.test(bytes.subarray(0, 8).toString('latin1'))) return false;

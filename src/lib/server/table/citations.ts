@@ -142,9 +142,7 @@ function readable(record: Record<string, unknown>): CslSource {
 			([key, value]) =>
 				['family', 'given', 'literal'].includes(key) && typeof value === 'string' && value.trim() !== ''
 		);
-		return parts.length > 0
-			? [Object.fromEntries(parts)]
-			: [];
+		return parts.length > 0 ? [Object.fromEntries(parts)] : [];
 	});
 	if (author.length > 0) csl.author = author;
 	const year = yearOf(record);

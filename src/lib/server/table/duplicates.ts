@@ -26,6 +26,7 @@ export const plain = (text: string): string =>
 /**
  * How alike two plain texts are: Dice's coefficient over their pairs of letters, each pair as often as it occurs.
  * @returns 0 (nothing in common) to 1 (the same)
+ * @internal for its test
  */
 export function likeness(one: string, other: string): number {
 	if (one === other) return 1;
@@ -63,7 +64,10 @@ const firstAuthor = ({ author }: CslSource): string => {
 	return plain(first?.family ?? first?.literal ?? '');
 };
 
-/** Whether two sources say by title and first author that they are one. A first author that is not known speaks neither for nor against. */
+/**
+ * Whether two sources say by title and first author that they are one. A first author that is not known speaks neither for nor against.
+ * @internal for its test
+ */
 export function sameByTitle(one: CslSource, other: CslSource): boolean {
 	const [title, second] = [plain(one.title ?? ''), plain(other.title ?? '')];
 	if (title === '' || second === '' || telling(title) !== telling(second)) return false;

@@ -12,7 +12,6 @@ const cursorSchema = z.object({
 /**
  * Where another page starts: after the row with this key and id, in this order, or with `back` where it ends: before it.
  * Opaque to the caller.
- * @internal exported for tests, which forge them
  */
 export function encodeCursor(
 	order: string,
@@ -26,7 +25,6 @@ export function encodeCursor(
 /**
  * Reads a cursor made by `encodeCursor`.
  * @throws Problem 422 if it is none, or belongs to another order
- * @internal exported for tests
  */
 export function decodeCursor(cursor: string, order: string) {
 	const refused = new Problem(422, 'This cursor does not belong to this list.', [

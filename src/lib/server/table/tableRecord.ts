@@ -69,7 +69,10 @@ export async function listTableRevisions(
 	return { revisions, next: rows.length > limit ? page[page.length - 1].revision : null };
 }
 
-/** One revision of the table; null for a number it never had. */
+/**
+ * One revision of the table; null for a number it never had.
+ * @internal for its test
+ */
 export async function tableRevisionOf(db: Sequelize, number: number): Promise<RevisionOfTable | null> {
 	const rows = await db.query<Row>(`${COLUMNS} WHERE table_revision.id = $number`, {
 		type: QueryTypes.SELECT,

@@ -82,15 +82,12 @@ export class TableImport extends Model<InferAttributes<TableImport>, InferCreati
 	declare message: CreationOptional<string>;
 }
 
-export class ImportEntry extends Model<InferAttributes<ImportEntry>, InferCreationAttributes<ImportEntry>> {
+class ImportEntry extends Model<InferAttributes<ImportEntry>, InferCreationAttributes<ImportEntry>> {
 	declare entryId: number;
 	declare importId: string;
 }
 
-export class ImportSample extends Model<
-	InferAttributes<ImportSample>,
-	InferCreationAttributes<ImportSample>
-> {
+class ImportSample extends Model<InferAttributes<ImportSample>, InferCreationAttributes<ImportSample>> {
 	declare sampleId: number;
 	declare importId: string;
 }
