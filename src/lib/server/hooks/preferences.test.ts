@@ -23,7 +23,7 @@ async function visit(cookie: string | undefined) {
 describe('preferences', () => {
 	it('are those of the cookie, and the theme stands in the page itself', async () => {
 		expect(await visit('{"theme":"dark","numbers":"palmer","threshold":0.95}')).toEqual({
-			preferences: { theme: 'dark', numbers: 'palmer', threshold: 0.95 },
+			preferences: { theme: 'dark', numbers: 'palmer', threshold: 0.95, units: 'percent' },
 			tag: '<html lang="en" data-theme="dark">'
 		});
 	});
@@ -39,7 +39,7 @@ describe('preferences', () => {
 		['an object for a theme', '{"theme":{"a":1},"numbers":[]}']
 	])('are the usual ones with %s', async (_, cookie) => {
 		expect(await visit(cookie)).toEqual({
-			preferences: { theme: 'system', numbers: 'iso', threshold: 0.9 },
+			preferences: { theme: 'system', numbers: 'iso', threshold: 0.9, units: 'percent' },
 			tag: '<html lang="en" data-theme="system">'
 		});
 	});
@@ -48,7 +48,8 @@ describe('preferences', () => {
 		expect((await visit('{"theme":"light","other":1}')).preferences).toEqual({
 			theme: 'light',
 			numbers: 'iso',
-			threshold: 0.9
+			threshold: 0.9,
+			units: 'percent'
 		});
 	});
 
@@ -59,6 +60,9 @@ describe('preferences', () => {
 		['{"theme":"dark","numbers":"palmer","threshold":"a half"}', { theme: 'dark', threshold: 0.9 }],
 		['{"theme":"dark","numbers":"palmer","threshold":null}', { theme: 'dark', threshold: 0.9 }]
 	])('lose a spoilt field alone: %s', async (cookie, changes) => {
-		expect((await visit(cookie)).preferences).toEqual({ numbers: 'palmer', threshold: 0.8, ...changes });
+		expect((await visit(cookie)).preferences).toEqual({
+			...{ numbers: 'palmer', threshold: 0.8, units: 'percent' },
+			...changes
+		});
 	});
 });

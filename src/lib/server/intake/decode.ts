@@ -31,8 +31,25 @@ export function decodeText(bytes: Uint8Array): { text: string; encoding: Encodin
 	try {
 		return { text: new TextDecoder('utf-8', { fatal: true }).decode(bytes), encoding: 'UTF-8' };
 	} catch {
-		return { text: new TextDecoder('windows-1252').decode(bytes), encoding: 'Windows-1252' };
+		return { text: fromWindows1252(bytes), encoding: 'Windows-1252' };
 	}
+}
+
+/**
+ * What 0x80 to 0x9f stand for (WHATWG Encoding Standard, index windows-1252). Node 20 decodes them as control characters, which
+ * was seen in 20.20.
+ */
+const ABOVE_ASCII =
+	'\u20ac\u0081\u201a\u0192\u201e\u2026\u2020\u2021\u02c6\u2030\u0160\u2039\u0152\u008d\u017d\u008f' +
+	'\u0090\u2018\u2019\u201c\u201d\u2022\u2013\u2014\u02dc\u2122\u0161\u203a\u0153\u009d\u017e\u0178';
+
+function fromWindows1252(bytes: Uint8Array): string {
+	const text = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength).toString('latin1');
+	return [...text]
+		.map((letter) =>
+			letter >= '\u0080' && letter <= '\u009f' ? ABOVE_ASCII[letter.charCodeAt(0) - 0x80] : letter
+		)
+		.join('');
 }
 
 /**

@@ -133,8 +133,8 @@ export async function readImport(db: Sequelize, row: TableImport): Promise<Previ
 		}
 	};
 	const heading = checked.headings.find(({ column }) => column === 'source_id')?.heading ?? '';
-	for (const { planned, entry } of clashes)
-		addProblem(preview, planned, heading, words.inTableOtherwise(entry));
+	for (const { planned, entry, draft } of clashes)
+		addProblem(preview, planned, heading, draft ? words.draftOf(entry) : words.inTableOtherwise(entry));
 	return { preview, entries: clashes.length > 0 ? [] : fresh };
 }
 
