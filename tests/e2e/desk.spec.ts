@@ -1,7 +1,7 @@
 import { AxeBuilder } from '@axe-core/playwright';
 import type { BrowserContext, Page } from '@playwright/test';
 import { freePort } from '../support/freePort.js';
-import type { Caller} from './support/caller';
+import type { Caller } from './support/caller';
 import { firstAdministrator, invited, PASSWORD } from './support/caller';
 import { linkIn, Mailbox } from './support/mailbox';
 import { expectProblem } from './support/refused';
